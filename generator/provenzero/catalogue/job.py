@@ -1,0 +1,64 @@
+"""Jobs: what is opened on which kind of equipment, read from the catalogue or from a site's own file."""
+
+from dataclasses import dataclass
+from enum import StrEnum
+
+
+class Equipment(StrEnum):
+    """The kind of equipment a job is done on."""
+
+    FUNCTION = "function"
+    FOUR_WAY_VALVE = "four_way_valve"
+    PUMP = "pump"
+    REGULATOR = "regulator"
+    BYPASS = "bypass"
+    BOTTLE = "bottle"
+    UNIT = "unit"
+
+
+class Leave(StrEnum):
+    """The end at which the function's piston must stand before the job starts."""
+
+    AS_FOUND = "as_found"
+    OPEN = "open"
+    CLOSE = "close"
+
+
+class TestKind(StrEnum):
+    """A test that proves the equipment again before it is handed back."""
+
+    __test__ = False
+
+    LEAK = "leak"
+    FUNCTION = "function"
+    PUMP = "pump"
+    REGULATOR = "regulator"
+    PRECHARGE = "precharge"
+    DRAWDOWN = "drawdown"
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Condition:
+    """Narrows the equipment a job applies to: attribute name and the words allowed for it."""
+
+    attribute: str
+    allowed: tuple[str, ...]
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Job:
+    """One kind of work on one kind of equipment. `opens` names the ports that will be open to the air."""
+
+    id: str
+    title: str
+    equipment: Equipment
+    conditions: tuple[Condition, ...]
+    opens: tuple[str, ...]
+    leave: Leave
+    limits: tuple[str, ...]
+    hazards: tuple[str, ...]
+    tools: tuple[str, ...]
+    prepare: tuple[str, ...]
+    work: tuple[str, ...]
+    restore: tuple[str, ...]
+    tests: tuple[TestKind, ...]

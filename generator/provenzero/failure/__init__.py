@@ -1,0 +1,1 @@
+"""What one failure does to a set of locks: leaking barriers, and the grade of an isolation."""

@@ -1,0 +1,1 @@
+"""The circuit as lines and passages, compiled from the description of a unit."""

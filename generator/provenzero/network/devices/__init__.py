@@ -1,0 +1,1 @@
+"""One module a kind of equipment: which lines it joins in which position."""

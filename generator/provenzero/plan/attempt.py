@@ -1,0 +1,221 @@
+"""One complete isolation for one dead region, and the search for the region with the least impairment."""
+
+import heapq
+from collections.abc import Iterable, Mapping
+from dataclasses import dataclass, replace
+
+from provenzero.failure.single import exposed
+from provenzero.network.model import DeviceTag, LineId, Medium
+from provenzero.plan.hold import Holding, hold_open
+from provenzero.plan.impairment import Loss, loss
+from provenzero.plan.model import Obstacle, Purpose
+from provenzero.plan.region import Region, enclose, unheld_movers
+from provenzero.plan.sequence import Made, Move, let_out_rest, perform, purpose_of
+from provenzero.state.may import Reach, reach
+from provenzero.state.model import State, Wiring
+from provenzero.state.must import vented
+
+_MOST_REGIONS = 160
+_MOST_AFTER = 60
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Attempt:
+    """An isolation: what was moved, which of it is locked, which lines that holds open; empty obstacles = it works."""
+
+    region: Region
+    made: tuple[Made, ...]
+    locks: Mapping[DeviceTag, str]
+    open_to_vent: tuple[LineId, ...]
+    unheld: tuple[LineId, ...]
+    state: State
+    loss: Loss
+    obstacles: tuple[Obstacle, ...]
+
+    def score(self) -> tuple[object, ...]:
+        """Impairment first, then unheld vents, then locks, then moves."""
+        return (self.loss.key(), len(self.unheld), len(self.locks), len(self.made))
+
+
+def search(wiring: Wiring, state: State, zone: Iterable[LineId]) -> Attempt:
+    """The best isolation found: least impairment, then fewest locks. If none works, the one that came nearest.
+
+    Regions are tried in the order of what they cost. Once one works, only others that cost no more are tried.
+    """
+    seed = frozenset(zone)
+    best: Attempt | None = None
+    nearest: Attempt | None = None
+    queue: list[tuple[tuple[int, ...], int, frozenset[LineId], bool]] = [((0,), 0, seed, True)]
+    seen: set[tuple[frozenset[LineId], bool]] = {(seed, True)}
+    tried = 0
+    while queue and tried < (_MOST_REGIONS if best is None else _MOST_AFTER):
+        rank, _, lines, take_in = heapq.heappop(queue)
+        if best is not None and rank[:4] > best.loss.key():
+            break
+        tried += 1
+        region = enclose(wiring, state, lines, take_in=take_in)
+        attempt = isolate(wiring, state, seed, region)
+        if not attempt.obstacles and (best is None or attempt.score() < best.score()):
+            best = attempt
+        if nearest is None or len(attempt.obstacles) < len(nearest.obstacles):
+            nearest = attempt
+        if best is not None and not best.unheld:
+            break
+        if region.obstacles:
+            continue
+        wider = [(lines, False)] if take_in else []
+        wider += [(lines | far, take_in) for far in _beyond(wiring, region)]
+        for more, soft in wider:
+            grown = enclose(wiring, state, more, take_in=soft)
+            if not grown.obstacles and (grown.dead, soft) not in seen:
+                seen.add((grown.dead, soft))
+                key = loss(wiring, grown.dead, grown.barriers).key()
+                heapq.heappush(queue, ((*key, int(not soft), len(grown.dead)), len(seen), more, soft))
+    found = best or nearest
+    if found is None:
+        raise AssertionError("a search always makes at least one attempt")
+    return found
+
+
+def _beyond(wiring: Wiring, region: Region) -> list[frozenset[LineId]]:
+    """For each barrier, what lies behind it: lines that would go dead too if it were left open."""
+    return [
+        frozenset(
+            there
+            for here, ways in wiring.anywhere[tag].items()
+            if here in region.dead
+            for there in ways
+            if there not in wiring.vents and there not in region.dead
+        )
+        for tag in region.barriers
+    ]
+
+
+def isolate(wiring: Wiring, state: State, zone: frozenset[LineId], region: Region) -> Attempt:
+    """Lock the region's edge, let it out, and keep only the locks that are needed."""
+    targets = _targets(wiring, state, zone, region)
+    holding = hold_open(wiring, state, region.outside.lines, region.barriers, targets)
+    weak = _weak(wiring, state, zone, region, holding.locked)
+    if weak - set(targets):
+        targets = [*targets, *(k for k in wiring.network.lines if k in weak and k not in targets)]
+        holding = hold_open(wiring, state, region.outside.lines, region.barriers, targets)
+    moves = _moves(wiring, region, holding)
+    made, reached, pending = perform(wiring, state, moves)
+    obstacles = [*region.obstacles]
+    obstacles += [Obstacle(line=_line_of(wiring, m.device, region), words="not_quiet", path=(m.device,)) for m in pending]
+    rest, reached, trapped = let_out_rest(
+        wiring, reached, region, {**holding.locked, **{m.device: m.position for m in moves}}
+    )
+    made += rest
+    obstacles += trapped
+    locks = {m.move.device: m.move.position for m in made if m.move.locks}
+    obstacles += _reached(wiring, locks, reached, zone)
+    open_lines = tuple(line for line in targets if line in holding.held)
+    if not obstacles:
+        locks = needed(wiring, reached, zone, locks, open_lines)
+    now_held = vented(wiring, locks)
+    return Attempt(
+        region=region,
+        made=tuple(made),
+        locks=locks,
+        open_to_vent=tuple(line for line in open_lines if line in now_held),
+        unheld=tuple(k for k in wiring.network.lines if k in _weak(wiring, reached, zone, region, locks)),
+        state=reached,
+        loss=loss(wiring, region.dead, locks),
+        obstacles=tuple(obstacles),
+    )
+
+
+def _targets(wiring: Wiring, state: State, zone: frozenset[LineId], region: Region) -> list[LineId]:
+    """Lines whose vent a lock should hold.
+
+    Where a barrier could leak into the region, emptied gas-loaded lines (they can rebuild some pressure), and pilots
+    that must stay dead.
+    """
+    emptied = {
+        s.line for s in wiring.network.sources if s.gas and s.line in region.dead and state.high(s.line) > 0.0
+    }
+    pilots = {line for tag in region.barriers for line in unheld_movers(wiring.device(tag))}
+    edge = {line for tag in region.barriers for line in wiring.anywhere[tag] if line in region.dead}
+    lines = wiring.network.lines
+    wanted = [
+        k
+        for k in lines
+        if k in (emptied | pilots | edge) & region.dead
+        and k not in wiring.vents
+        and lines[k].medium in {Medium.CONTROL_FLUID, Medium.AIR}
+    ]
+    return sorted(wanted, key=lambda k: k not in zone)
+
+
+def _weak(
+    wiring: Wiring, state: State, zone: frozenset[LineId], region: Region, locks: Mapping[DeviceTag, str]
+) -> set[LineId]:
+    """Zone lines that one leaking barrier would put under pressure, because no locked vent takes the leak."""
+    released = replace(state, pressures={k: (0.0, 0.0) if k in region.dead else v for k, v in state.pressures.items()})
+    found = exposed(wiring, released, zone, locks, [t for t in region.barriers if t in locks])
+    return {line for lines in found.values() for line in lines if wiring.network.lines[line].medium is not Medium.ELECTRIC}
+
+
+def _moves(wiring: Wiring, region: Region, holding: Holding) -> list[Move]:
+    moves = [
+        Move(
+            device=tag,
+            position=position,
+            purpose=purpose_of(wiring, tag, region.dead, barrier=tag in region.barriers),
+            locks=True,
+        )
+        for tag, position in holding.locked.items()
+    ]
+    moves += [
+        Move(device=tag, position=position, purpose=Purpose.VENT, locks=False)
+        for tag, position in holding.loose.items()
+    ]
+    place = {tag: i for i, tag in enumerate(wiring.network.devices)}
+    return sorted(moves, key=lambda m: place[m.device])
+
+
+def _line_of(wiring: Wiring, device: DeviceTag, region: Region) -> LineId:
+    lines = wiring.anywhere[device]
+    return next((line for line in lines if line in region.dead), next(iter(lines)))
+
+
+def _reached(
+    wiring: Wiring, locks: Mapping[DeviceTag, str], state: State, zone: frozenset[LineId]
+) -> list[Obstacle]:
+    flood = reach(wiring, locks, state.pressures)
+    return [
+        Obstacle(line=line, words="reached", path=flood.path(line))
+        for line in wiring.network.lines
+        if line in zone and line in flood.lines
+    ]
+
+
+def needed(
+    wiring: Wiring,
+    state: State,
+    zone: frozenset[LineId],
+    locks: Mapping[DeviceTag, str],
+    open_lines: tuple[LineId, ...],
+) -> dict[DeviceTag, str]:
+    """The locks that are left when each one that nothing depends on has been left out, last ones first."""
+    kept = dict(locks)
+    for tag in reversed(list(locks)):
+        fewer = {k: v for k, v in kept.items() if k != tag}
+        if not _lost_without(wiring, state, zone, fewer, open_lines):
+            kept = fewer
+    return kept
+
+
+def _lost_without(
+    wiring: Wiring,
+    state: State,
+    zone: frozenset[LineId],
+    locks: Mapping[DeviceTag, str],
+    open_lines: tuple[LineId, ...],
+) -> bool:
+    flood: Reach = reach(wiring, locks, state.pressures)
+    if flood.lines & zone:
+        return True
+    held = vented(wiring, locks)
+    return any(line not in held for line in open_lines)

@@ -1,0 +1,1 @@
+"""The properties of a plan, each shown anew on the network: verdicts with their evidence."""

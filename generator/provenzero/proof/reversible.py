@@ -1,0 +1,21 @@
+"""Reversible: the way back ends where the plan began, with every lock off."""
+
+from provenzero.plan.model import Plan, Verdict
+from provenzero.proof.replay import Replay
+
+
+def reversible(plan: Plan, run: Replay) -> Verdict:
+    """Whether positions are as they were, no lock is on, and what was fed by a source is fed again."""
+    end = run.moments[-1]
+    moved = [k for k, v in end.state.positions.items() if v != run.start.positions[k]]
+    if moved:
+        return Verdict(holds=False, evidence=f"not where they stood: {', '.join(moved)}")
+    if end.locks:
+        return Verdict(holds=False, evidence=f"locks left on: {', '.join(end.locks)}")
+    unfed = [k for k in run.start.fed if k not in end.state.fed]
+    if unfed:
+        return Verdict(holds=False, evidence=f"not under pressure again: {', '.join(sorted(unfed))}")
+    changed = [k for k in run.start.fed if end.state.pressures[k] != run.start.pressures[k]]
+    if changed:
+        return Verdict(holds=False, evidence=f"another pressure than before: {', '.join(sorted(changed))}")
+    return Verdict(holds=True, evidence=f"{len(plan.network.devices)} devices back in position, all locks off")

@@ -1,0 +1,1 @@
+"""Documents and drawings to bytes: HTML, PDF and SVG."""
