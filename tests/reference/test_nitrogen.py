@@ -1,15 +1,15 @@
 """Nitrogen against other implementations, none of which shares code with this one.
 
 - CoolProp evaluates the same equation of Span et al. (2000): agreement must be numerical.
-- pyaga8 has two other equations: GERG-2008 (Kunz and Wagner 2012, ISO 20765-2) and AGA8 Part 1 DETAIL (AGA Report
-  No. 8, 2017). Agreement must be within what these state for themselves.
+- pyaga8 has two other equations: GERG-2008 (Kunz and Wagner 2012, ISO 20765-2) and AGA8 Part 1 DETAIL (AGA
+  Report No. 8, 2017). Agreement must be within what these state for themselves.
 """
 
 from itertools import pairwise
 
-import CoolProp
 import pyaga8
 import pytest
+from CoolProp import CoolProp
 
 from provenzero.physics.accumulator import GasCharge
 from provenzero.physics.discharge import bleed_fast, deliver_fast, deliver_slow
@@ -107,20 +107,23 @@ def test_a_fast_discharge_ends_where_the_library_says_even_where_it_condenses(
 
 @pytest.mark.parametrize("temperature", [63.151, 70, 77.355, 90, 100, 110, 120, 125, 126, 126.18])
 def test_condensation_is_that_of_the_library(temperature: float) -> None:
+    # Close to the critical point the library of before version 8 iterates to about 1e-6 only.
+    close = 1e-10 if temperature < 125.5 else 1e-5
     nitrogen = library()
     here = saturation_at_temperature(temperature)
     nitrogen.update(CoolProp.QT_INPUTS, 1, temperature)
-    assert here.pressure_pa == pytest.approx(nitrogen.p(), rel=1e-10)
-    assert here.vapour.density_kg_m3 == pytest.approx(nitrogen.rhomass(), rel=1e-10)
-    assert here.vapour.entropy_j_kg_k == pytest.approx(nitrogen.smass(), rel=1e-10)
+    assert here.pressure_pa == pytest.approx(nitrogen.p(), rel=close)
+    assert here.vapour.density_kg_m3 == pytest.approx(nitrogen.rhomass(), rel=close)
+    assert here.vapour.entropy_j_kg_k == pytest.approx(nitrogen.smass(), rel=close)
     nitrogen.update(CoolProp.QT_INPUTS, 0, temperature)
-    assert here.liquid.density_kg_m3 == pytest.approx(nitrogen.rhomass(), rel=1e-10)
-    assert here.liquid.internal_energy_j_kg == pytest.approx(nitrogen.umass(), rel=1e-9, abs=1e-3)
+    assert here.liquid.density_kg_m3 == pytest.approx(nitrogen.rhomass(), rel=close)
+    assert here.liquid.internal_energy_j_kg == pytest.approx(nitrogen.umass(), rel=close, abs=1e-3)
     assert saturation_at_pressure(here.pressure_pa).temperature_k == pytest.approx(temperature, rel=1e-9)
 
 
 def test_boiling_point_and_critical_pressure_are_the_published_ones() -> None:
-    # Span et al. (2000): normal boiling point 77.355 K, critical point 126.192 K and 3.3958 MPa (values from memory).
+    # Span et al. (2000): normal boiling point 77.355 K, critical point 126.192 K and 3.3958 MPa (values
+    # from memory).
     assert saturation_at_pressure(101_325.0).temperature_k == pytest.approx(77.355, abs=5e-4)
     assert gas_pressure_pa(313.3, 130.0) > 3.3958e6
     assert saturation_at_temperature(126.19).pressure_pa == pytest.approx(3.3958e6, rel=1e-4)
@@ -142,7 +145,8 @@ def other_density_kg_m3(equation: pyaga8.Gerg2008 | pyaga8.Detail, bar: float, c
 
 @pytest.mark.parametrize("bar", WORKING_BAR)
 def test_density_agrees_with_gerg_2008_within_its_stated_uncertainty(bar: float) -> None:
-    # GERG-2008 states 0.1 % up to 35 MPa and 0.2 % up to 70 MPa for the main components (values from memory).
+    # GERG-2008 states 0.1 % up to 35 MPa and 0.2 % up to 70 MPa for the main components (values from
+    # memory).
     stated = 0.001 if bar <= 350 else 0.002
     equation = pyaga8.Gerg2008()
     for celsius in WORKING_C:

@@ -53,7 +53,6 @@ class Fact:
 
     label: str
     value: Cell
-    wide: bool = False
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -137,16 +136,20 @@ class Reading:
 class StepCard:
     """One step on paper: one action, how it must end, the boxes for the hand, what to do if it is not so.
 
-    `device`: tag, plain name and location. `asks`: labels of further boxes. `figures`: what to expect besides gauges.
-    `hold`: the words of a hold point, empty if the step is none.
+    `device`: tag, plain name and location. `speaks_of`: the lines meant, where no device is. `unlock`, `lock`: the lock
+    that comes off before the action or goes on with it. `outcome`: what eye and ear must find. `asks`: labels of further
+    boxes. `figures`: volumes and times to expect. `hold`: the words of a hold point, empty if the step is none.
     """
 
     number: str
     action: str
     warnings: tuple[Notice, ...] = ()
     device: tuple[str, ...] = ()
+    speaks_of: str = ""
+    unlock: str = ""
     lock: str = ""
     readings: tuple[Reading, ...] = ()
+    outcome: str = ""
     asks: tuple[str, ...] = ()
     figures: tuple[str, ...] = ()
     why: str = ""

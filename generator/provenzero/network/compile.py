@@ -9,7 +9,7 @@ from provenzero.network.devices.regulators import bypass, pressure_line, regulat
 from provenzero.network.devices.remote import air, panel
 from provenzero.network.devices.runs import fitting
 from provenzero.network.model import DeviceKind, LineId, Medium, Network, Source, SourceKind
-from provenzero.unit.model import ATMOSPHERE, HEADER, RESERVOIR, RETURNS, FluidKind, Pump, Unit
+from provenzero.unit.model import ATMOSPHERE, HEADER, RESERVOIR, RETURNS, FluidKind, Unit
 
 HEAVIEST_KG_M3 = {
     FluidKind.MINERAL_OIL: 900.0,
@@ -37,7 +37,7 @@ def compile_network(unit: Unit) -> Network:
     for actuator in unit.functions:
         chambers(builder, actuator, density)
     for store in unit.banks:
-        bank(builder, store, _charge_pag(unit.pumps), unit.identity.rated_pressure_pag)
+        bank(builder, store, _charge_pag(unit, store.attached_to), unit.identity.rated_pressure_pag)
     for machine in unit.pumps:
         pump(builder, machine)
     for item in unit.regulators:
@@ -73,11 +73,17 @@ def vents_for(network: Network, zone: frozenset[LineId]) -> Network:
     return network.with_vents(network.vents() - tank)
 
 
-def _charge_pag(pumps: tuple[Pump, ...]) -> tuple[float, float]:
-    starts = [p.start_pressure_pag for p in pumps if p.start_pressure_pag is not None]
-    stops = [p.stop_pressure_pag for p in pumps]
-    high = max(stops, default=0.0)
-    return (min(starts, default=high), high)
+def _charge_pag(unit: Unit, line: str) -> tuple[float, float]:
+    """The pressure that bottles on a line hold in service [low, high, Pa gauge]; low 0 where nobody can be sure."""
+    if line == HEADER:
+        starts = [p.start_pressure_pag for p in unit.pumps if p.start_pressure_pag is not None]
+        high = max((p.stop_pressure_pag for p in unit.pumps), default=0.0)
+        return (min(starts, default=high), high)
+    for item in unit.regulators:
+        if item.serves == line:
+            return (0.0, min(item.set_pressure_pag, _charge_pag(unit, item.fed_from)[1]))
+    feeds = [f.fed_from for f in unit.functions if line in (f"{f.name}.open", f"{f.name}.close")]
+    return (0.0, max((_charge_pag(unit, feed)[1] for feed in feeds), default=0.0))
 
 
 def _tank(builder: Builder, unit: Unit, density_kg_m3: float) -> None:

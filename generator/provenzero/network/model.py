@@ -9,6 +9,7 @@ LineId = NewType("LineId", str)
 DeviceTag = NewType("DeviceTag", str)
 
 HAND = "hand"
+FULL_OPEN = "full_open"  # where an air-operated regulator goes by itself when its air fails; no hand can choose it
 
 
 class Medium(StrEnum):

@@ -5,6 +5,7 @@ constant entropy. A very deep discharge ends where a part of the gas would conde
 then taken in equilibrium.
 """
 
+import math
 from dataclasses import dataclass
 from typing import Final
 
@@ -38,6 +39,8 @@ from provenzero.physics.saturation import (
 from provenzero.physics.standard import check_range
 
 _POISSON: Final = 0.4  # [-] k - 1, for the first guess only
+_LOG_LOWEST: Final = math.log(LOWEST_TEMPERATURE_K)
+_LOG_HIGHEST: Final = math.log(HIGHEST_TEMPERATURE_K)
 _SURELY_GAS_K: Final = 160.0  # Poisson's law is at most 5 K too warm: above this nothing condenses
 
 
@@ -81,7 +84,7 @@ def gas_state(pressure_pa: float, temperature_k: float) -> GasState:
 def to_density_fast(start: GasState, density_kg_m3: float) -> GasState:
     """Give the state after a fast change of volume.
 
-    Formula: s(rho, T) = s of the start, solved for T.
+    Formula: s(rho, T) = s of the start, solved for ln T, in which entropy is nearly straight.
 
     Args:
         start: The state before.
@@ -103,16 +106,15 @@ def to_density_fast(start: GasState, density_kg_m3: float) -> GasState:
     if entropy < gas_entropy_j_kg_k(density_kg_m3, LOWEST_TEMPERATURE_K):
         return _deep_to_density(entropy, density_kg_m3)
 
-    def excess(temperature: float) -> tuple[float, float]:
-        at = isotherm(temperature)
+    reduced = entropy / GAS_CONSTANT_J_KG_K
+
+    def excess(log_temperature: float) -> tuple[float, float]:
+        at = isotherm(math.exp(log_temperature))
         real = residual(at, delta)
         value, tau, tau2 = ideal(at.tau, delta)
-        return (
-            GAS_CONSTANT_J_KG_K * (tau + real.tau - value - real.value) - entropy,
-            -GAS_CONSTANT_J_KG_K * (tau2 + real.tau2) / temperature,
-        )
+        return tau + real.tau - value - real.value - reduced, -tau2 - real.tau2
 
-    temperature = rising_root(excess, LOWEST_TEMPERATURE_K, HIGHEST_TEMPERATURE_K, guess)
+    temperature = math.exp(rising_root(excess, _LOG_LOWEST, _LOG_HIGHEST, math.log(guess)))
     _check_hot_end(temperature)
     return _single(density_kg_m3, temperature)
 
@@ -148,21 +150,20 @@ def _on_isobar(
     entropy: float, pressure_pa: float, lowest_and_guess_k: tuple[float, float], densest: float
 ) -> GasState:
     density = 0.0
+    reduced = entropy / GAS_CONSTANT_J_KG_K
 
-    def excess(temperature: float) -> tuple[float, float]:
+    def excess(log_temperature: float) -> tuple[float, float]:
         nonlocal density
+        temperature = math.exp(log_temperature)
         density = _gas_branch(pressure_pa, temperature, densest, density)
         at = isotherm(temperature)
         delta = density / CRITICAL_DENSITY_KG_M3
         real = residual(at, delta)
         value, tau, tau2 = ideal(at.tau, delta)
-        return (
-            GAS_CONSTANT_J_KG_K * (tau + real.tau - value - real.value) - entropy,
-            GAS_CONSTANT_J_KG_K * (_isobaric(real) - tau2 - real.tau2) / temperature,
-        )
+        return tau + real.tau - value - real.value - reduced, _isobaric(real) - tau2 - real.tau2
 
     lowest, guess = lowest_and_guess_k
-    temperature = rising_root(excess, lowest, HIGHEST_TEMPERATURE_K, guess)
+    temperature = math.exp(rising_root(excess, math.log(lowest), _LOG_HIGHEST, math.log(guess)))
     _check_hot_end(temperature)
     state = _single(_gas_branch(pressure_pa, temperature, densest, density), temperature)
     return GasState(

@@ -128,17 +128,38 @@ class Helmholtz:
     delta_tau: float  # [-] delta tau d2a/(ddelta dtau)
 
 
+def _by_power_of_delta() -> tuple[tuple[int, tuple[tuple[int, tuple[tuple[float, float], ...]], ...]], ...]:
+    return tuple(
+        (
+            exponent,
+            tuple(
+                (power, tuple((factor, t) for factor, d, t in terms if d == power))
+                for power in sorted({d for _, d, _ in terms})
+            ),
+        )
+        for exponent, terms in _RESIDUAL
+    )
+
+
+_GROUPED: Final = _by_power_of_delta()
+
+
 @lru_cache(maxsize=256)
 def _isotherm(temperature_k: float) -> Isotherm:
     tau = CRITICAL_TEMPERATURE_K / temperature_k
     groups = []
-    for exponent, terms in _RESIDUAL:
-        by_power: dict[int, tuple[float, float, float]] = {}
-        for factor, d, t in terms:
-            value = factor * tau**t
-            a, b, c = by_power.get(d, (0.0, 0.0, 0.0))
-            by_power[d] = (a + value, b + t * value, c + t * (t - 1.0) * value)
-        groups.append((exponent, tuple((d, *abc) for d, abc in by_power.items())))
+    for exponent, powers in _GROUPED:
+        group = []
+        for d, terms in powers:
+            a = b = c = 0.0
+            for factor, t in terms:
+                value = factor * tau**t
+                a += value
+                value *= t
+                b += value
+                c += value * (t - 1.0)
+            group.append((d, a, b, c))
+        groups.append((exponent, tuple(group)))
     critical = []
     for factor, d, t, phi, beta, gamma in _CRITICAL:
         off = tau - gamma
@@ -193,8 +214,7 @@ def pressure_terms(at: Isotherm, delta: float) -> tuple[float, float]:
             first += damping * (s1 - g * s)
             second += damping * (s2 - 2.0 * g * s1 + s * g * (g - exponent + 1))
         else:
-            first += s1
-            second += s2
+            first, second = s1, s2  # the group without exponential comes first
     for d, a, phi, _, _ in at.critical:
         off = delta - 1.0
         v = a * powers[d] * math.exp(-phi * off * off)
@@ -217,35 +237,43 @@ def residual(at: Isotherm, delta: float) -> Helmholtz:
     Source: Span et al. (2000), residual part, terms 1 to 36 and their derivatives.
     """
     powers = _powers(delta)
-    value = tau = tau2 = delta_tau = 0.0
-    first, second = pressure_terms(at, delta)
+    value = first = second = tau = tau2 = delta_tau = 0.0
     for exponent, terms in at.groups:
-        s = b0 = b1 = c0 = 0.0
+        s = s1 = s2 = b0 = b1 = c0 = 0.0
         for d, a, b, c in terms:
             power = powers[d]
-            s += a * power
-            b *= power  # noqa: PLW2901 - the loop value is not needed again
-            b0 += b
-            b1 += b * d
+            v = a * power
+            s += v
+            v *= d
+            s1 += v
+            s2 += v * (d - 1)
+            v = b * power
+            b0 += v
+            b1 += v * d
             c0 += c * power
         if exponent:
-            damping = math.exp(-powers[exponent])
+            x = powers[exponent]
+            g = exponent * x
+            damping = math.exp(-x)
             value += damping * s
+            first += damping * (s1 - g * s)
+            second += damping * (s2 - 2.0 * g * s1 + s * g * (g - exponent + 1))
             tau += damping * b0
             tau2 += damping * c0
-            delta_tau += damping * (b1 - exponent * powers[exponent] * b0)
+            delta_tau += damping * (b1 - g * b0)
         else:
-            value += s
-            tau += b0
-            tau2 += c0
-            delta_tau += b1
+            value, first, second = s, s1, s2
+            tau, tau2, delta_tau = b0, c0, b1
     for d, a, phi, t1, t2 in at.critical:
         off = delta - 1.0
         v = a * powers[d] * math.exp(-phi * off * off)
+        w = d - 2.0 * phi * delta * off
         value += v
+        first += v * w
+        second += v * (w * w - d - 2.0 * phi * delta * delta)
         tau += v * t1
         tau2 += v * t2
-        delta_tau += v * t1 * (d - 2.0 * phi * delta * off)
+        delta_tau += v * t1 * w
     return Helmholtz(value=value, delta=first, delta2=second, tau=tau, tau2=tau2, delta_tau=delta_tau)
 
 

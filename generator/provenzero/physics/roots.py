@@ -6,7 +6,7 @@ from typing import Final
 
 _STEPS: Final = 200
 _RELATIVE: Final = 4e-15
-_SETTLED: Final = 1e-9  # a Newton step this small squares to below double precision: it is the last one
+_SETTLED: Final = 1e-7  # the step after one this small is below double precision
 _BRACKET: Final = 1e-12
 
 

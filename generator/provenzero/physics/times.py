@@ -13,7 +13,7 @@ from provenzero.physics.accumulator import (
 from provenzero.physics.discharge import bleed_fast
 from provenzero.physics.flow import valve_flow_m3_s
 from provenzero.physics.gas import gas_pressure_pa
-from provenzero.physics.isentrope import gas_state, to_density_fast, to_pressure_fast
+from provenzero.physics.isentrope import GasState, gas_state, to_density_fast, to_pressure_fast
 from provenzero.physics.liquid import static_head_pa
 from provenzero.physics.standard import WATER_DENSITY_KG_M3, absolute_pa, check_range, gauge_pag
 
@@ -97,18 +97,27 @@ def bleed_down(
     before = gas_state(absolute_pa(start_pag), temperature_k)
     return Duration(
         slow_s=_outflow_s(first, slow_end, outlet, lambda v: gas_pressure_pa(mass / v, temperature_k)),
-        fast_s=_outflow_s(
-            first, after.gas_volume_m3, outlet, lambda v: to_density_fast(before, mass / v).pressure_pa
-        ),
+        fast_s=_outflow_s(first, after.gas_volume_m3, outlet, _fast_pressures(before, mass)),
         slow_m3=slow_end - first,
         fast_m3=after.delivered_m3,
     )
 
 
+def _fast_pressures(before: GasState, mass: float) -> Callable[[float], float]:
+    state = before
+
+    def pressure_pa(volume: float) -> float:
+        nonlocal state  # each point starts from the one before it, which is near
+        state = to_density_fast(state, mass / volume)
+        return state.pressure_pa
+
+    return pressure_pa
+
+
 def _outflow_s(first: float, last: float, outlet: Outlet, pressure_pa: Callable[[float], float]) -> float:
     # Points crowd toward the end, where the flow may die away as a root: v = last - (last - first) x^2.
     total = 0.0
-    for x, weight in _GAUSS:
+    for x, weight in reversed(_GAUSS):
         volume = last - (last - first) * x * x
         drop = gauge_pag(pressure_pa(volume)) - outlet.back_pag
         flow = valve_flow_m3_s(outlet.flow_coefficient, drop, outlet.specific_gravity)

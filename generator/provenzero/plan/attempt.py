@@ -6,7 +6,7 @@ from dataclasses import dataclass, replace
 
 from provenzero.failure.single import exposed
 from provenzero.network.model import DeviceTag, LineId, Medium
-from provenzero.plan.hold import Holding, hold_open
+from provenzero.plan.hold import Holding, hold_open, way_out
 from provenzero.plan.impairment import Loss, loss
 from provenzero.plan.model import Obstacle, Purpose
 from provenzero.plan.region import Region, enclose, unheld_movers
@@ -15,8 +15,10 @@ from provenzero.state.may import Reach, reach
 from provenzero.state.model import State, Wiring
 from provenzero.state.must import vented
 
-_MOST_REGIONS = 160
-_MOST_AFTER = 60
+_MOST_REGIONS = 60
+_MOST_AFTER = 40
+_LINES_TRIED = 3
+_WAYS_TRIED = 4
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -40,16 +42,34 @@ class Attempt:
 def search(wiring: Wiring, state: State, zone: Iterable[LineId]) -> Attempt:
     """The best isolation found: least impairment, then fewest locks. If none works, the one that came nearest.
 
-    Regions are tried in the order of what they cost. Once one works, only others that cost no more are tried.
+    First with trapped liquid beside the region taken in; where that never works, with locks between.
     """
     seed = frozenset(zone)
+    found = _search(wiring, state, seed, take_in=True)
+    if found.obstacles:
+        other = _search(wiring, state, seed, take_in=False)
+        if not other.obstacles:
+            return other
+    return found
+
+
+def _explained(first: Attempt, nearest: Attempt, blocked: list[Obstacle]) -> Attempt:
+    """The nearest attempt with the reasons of all: what the narrowest lacked and what stopped the wider ones."""
+    reasons = [*first.obstacles, *nearest.obstacles, *blocked]
+    root = [o for o in reasons if o.words != "reached"] or reasons
+    return replace(nearest, obstacles=tuple(dict.fromkeys(root)))
+
+
+def _search(wiring: Wiring, state: State, seed: frozenset[LineId], *, take_in: bool) -> Attempt:
+    """Try regions in the order of what they cost; once one works, only others that cost no more impairment."""
     best: Attempt | None = None
-    nearest: Attempt | None = None
-    queue: list[tuple[tuple[int, ...], int, frozenset[LineId], bool]] = [((0,), 0, seed, True)]
-    seen: set[tuple[frozenset[LineId], bool]] = {(seed, True)}
+    made: list[Attempt] = []
+    blocked: list[Obstacle] = []
+    queue: list[tuple[tuple[int, ...], int, frozenset[LineId]]] = [((0,), 0, seed)]
+    seen: set[frozenset[LineId]] = {seed}
     tried = 0
     while queue and tried < (_MOST_REGIONS if best is None else _MOST_AFTER):
-        rank, _, lines, take_in = heapq.heappop(queue)
+        rank, _, lines = heapq.heappop(queue)
         if best is not None and rank[:4] > best.loss.key():
             break
         tried += 1
@@ -57,23 +77,50 @@ def search(wiring: Wiring, state: State, zone: Iterable[LineId]) -> Attempt:
         attempt = isolate(wiring, state, seed, region)
         if not attempt.obstacles and (best is None or attempt.score() < best.score()):
             best = attempt
-        if nearest is None or len(attempt.obstacles) < len(nearest.obstacles):
-            nearest = attempt
+        made.append(attempt)
         if best is not None and not best.unheld:
             break
-        if region.obstacles:
-            continue
-        wider = [(lines, False)] if take_in else []
-        wider += [(lines | far, take_in) for far in _beyond(wiring, region)]
-        for more, soft in wider:
-            grown = enclose(wiring, state, more, take_in=soft)
-            if not grown.obstacles and (grown.dead, soft) not in seen:
-                seen.add((grown.dead, soft))
+        for far in _directions(wiring, state, region, attempt):
+            more = lines | far
+            grown = enclose(wiring, state, more, take_in=take_in)
+            blocked += grown.obstacles
+            if not grown.obstacles and grown.dead not in seen:
+                seen.add(grown.dead)
                 key = loss(wiring, grown.dead, grown.barriers).key()
-                heapq.heappush(queue, ((*key, int(not soft), len(grown.dead)), len(seen), more, soft))
-    found = best or nearest
-    if found is None:
-        raise AssertionError("a search always makes at least one attempt")
+                heapq.heappush(queue, ((*key, len(grown.dead)), len(seen), more))
+    if best is not None:
+        return best
+    return _explained(made[0], min(made[1:] or made, key=lambda a: len(a.obstacles)), blocked)
+
+
+def _directions(wiring: Wiring, state: State, region: Region, attempt: Attempt) -> list[frozenset[LineId]]:
+    """What else might go dead so that a line in trouble gets a vent: the ways on which a vent lies.
+
+    None where the circuit has no such way at all, for then a wider region has none either.
+    """
+    if region.obstacles:
+        return []
+    trapped = [o.line for o in attempt.obstacles if o.words == "trapped"]
+    lines = trapped or list(attempt.unheld)
+    if not lines:
+        return _beyond(wiring, region)
+    found: list[frozenset[LineId]] = []
+    for line in lines[:_LINES_TRIED]:
+        banned: dict[DeviceTag, str] = {}
+        for _ in range(_WAYS_TRIED):
+            legs = way_out(wiring, state, frozenset(), line, banned, through_checks=bool(trapped))
+            if legs is None:
+                if not banned and trapped:
+                    return []
+                break
+            crossed = [leg for leg in legs if leg.device in region.barriers]
+            onward = {leg.line for leg in legs} | {k for leg in crossed for k in wiring.anywhere[leg.device]}
+            far = frozenset(onward - wiring.vents - region.dead)
+            if far and far not in found:
+                found.append(far)
+            if not crossed:
+                break
+            banned[crossed[0].device] = region.barriers[crossed[0].device]
     return found
 
 

@@ -5,7 +5,7 @@ from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass, field
 from itertools import product
 
-from provenzero.network.model import Device, DeviceTag, LineId, PassageKind
+from provenzero.network.model import FULL_OPEN, Device, DeviceTag, LineId, PassageKind
 from provenzero.state.model import State, Wiring
 
 _MOVE = 0.01
@@ -68,7 +68,7 @@ def hold_open(
 
 
 def _current_first(device: Device, state: State) -> list[str]:
-    return sorted(device.positions, key=lambda p: p != state.positions[device.tag])
+    return sorted((p for p in device.positions if p != FULL_OPEN), key=lambda p: p != state.positions[device.tag])
 
 
 def _choose(  # noqa: PLR0913 - the choice and what it may not touch
@@ -143,7 +143,7 @@ def way_out(
 def _exits(
     wiring: Wiring, device: Device, here: LineId, fixed: Mapping[DeviceTag, str], *, through_checks: bool
 ) -> Iterable[tuple[str, LineId]]:
-    positions = [fixed[device.tag]] if device.tag in fixed else list(device.positions)
+    positions = [fixed[device.tag]] if device.tag in fixed else [p for p in device.positions if p != FULL_OPEN]
     for position in positions:
         for item in device.positions[position]:
             if item.kind is PassageKind.OPEN and item.certain:

@@ -6,6 +6,7 @@ from dataclasses import dataclass, replace
 from provenzero.catalogue.job import Job, Leave, TestKind
 from provenzero.failure.grade import grades
 from provenzero.network.compile import vents_for
+from provenzero.network.devices.pumps import LIQUID
 from provenzero.network.model import Actuator, DeviceKind, DeviceTag, LineId, Medium, Network
 from provenzero.plan.attempt import Attempt, search
 from provenzero.plan.impairment import impairment
@@ -72,6 +73,10 @@ def make_plan(
     stuck = _reinstate(making, start, purposes)
     if stuck:
         obstacles = tuple(Obstacle(line=next(iter(wiring.anywhere[t])), words="no_way_back", path=(t,)) for t in stuck)
+        return Refusal(unit=unit, job=job, on=on, zone=zone, obstacles=obstacles)
+    other = [k for k in start.fed if start.low(k) > 0.0 and script.state.pressures[k] != start.pressures[k]]
+    if other:
+        obstacles = tuple(Obstacle(line=k, words="not_restored") for k in other)
         return Refusal(unit=unit, job=job, on=on, zone=zone, obstacles=obstacles)
     _tests(making, start)
     locks = _locks(making, isolated, purposes)
@@ -183,13 +188,24 @@ def _reinstate(making: _Making, start: State, purposes: Mapping[DeviceTag, Purpo
             script.restore(Section.REINSTATE, tag, start.positions[tag], announce=())
             line = next(k for k in wiring.anywhere[tag] if k not in wiring.vents)
             script.recharge(Section.REINSTATE, line, {"device": tag})
-    stuck = restore_all(script, start, purposes, making.zone)
+    emptied = [
+        source.line
+        for source in wiring.network.sources
+        if source.line in (LIQUID, *_reserves(making.unit))
+        and start.high(source.line) > 0.0 >= script.state.high(source.line)
+    ]
+    stuck = restore_all(script, start, purposes, making.zone, emptied)
     if not stuck:
         script.say(
             Section.REINSTATE, StepKind.READ_RESTORED, expect=readings(wiring, script.state, making.attempt.region.dead),
             reason="read_restored",
         )
     return stuck
+
+
+def _reserves(unit: Unit) -> tuple[LineId, ...]:
+    """Gas lines of the nitrogen backups, which only new bottles fill again."""
+    return tuple(LineId(f"{n.tag}.gas") for n in unit.nitrogen_backups)
 
 
 def _tests(making: _Making, start: State) -> None:

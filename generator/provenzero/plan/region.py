@@ -7,7 +7,7 @@ where the far side holds nothing but liquid that empties with the rest, the regi
 from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
 
-from provenzero.network.model import Device, DeviceTag, LineId, SourceKind
+from provenzero.network.model import FULL_OPEN, Device, DeviceTag, LineId, SourceKind
 from provenzero.plan.model import Obstacle
 from provenzero.state.may import Reach, reach
 from provenzero.state.model import State, Wiring
@@ -84,7 +84,8 @@ def _separating(
     good = [
         position
         for position in device.positions
-        if not any(
+        if position != FULL_OPEN
+        and not any(
             there in far
             for here, ways in wiring.joined[tag, position].items()
             if here in dead

@@ -2,17 +2,28 @@
 
 from collections.abc import Mapping
 
+from provenzero.network.devices.regulators import BACKED_OFF, SET
 from provenzero.network.model import DeviceKind, DeviceTag, LineId, Medium
 from provenzero.plan.model import Purpose, Section
+from provenzero.plan.sequence import Move
 from provenzero.plan.steps import Script
 from provenzero.state.action import Effect, act
 from provenzero.state.model import State, Wiring
 
+_ENERGY = 6
+
 
 def restore_all(
-    script: Script, start: State, purposes: Mapping[DeviceTag, Purpose], zone: tuple[LineId, ...]
+    script: Script,
+    start: State,
+    purposes: Mapping[DeviceTag, Purpose],
+    zone: tuple[LineId, ...],
+    emptied: list[LineId],
 ) -> list[DeviceTag]:
-    """Add the steps that put every device back where it stood. Returns the devices for which no quiet turn was found."""
+    """Add the steps that put every device back where it stood, filling what was `emptied` before energy comes back.
+
+    Returns the devices for which no quiet turn was found.
+    """
     wiring = script.wiring
     pending = [
         tag
@@ -24,10 +35,40 @@ def restore_all(
         tag = _next(script, pending, turns, start)
         if tag is None:
             return pending
+        if turns[tag] >= _ENERGY:
+            _fill(script, emptied)
         announce = _announce(wiring, script.state, tag, start.positions[tag], zone)
         script.restore(Section.REINSTATE, tag, start.positions[tag], announce=announce)
         pending.remove(tag)
+    _fill(script, emptied)
+    _reset_regulators(script, start)
+    _charge(script, start)
     return []
+
+
+def _reset_regulators(script: Script, start: State) -> None:
+    """Back off and set again each relieving regulator that passed more than its set pressure while its air was off."""
+    for tag, device in script.wiring.network.devices.items():
+        if device.kind is not DeviceKind.REGULATOR or not device.positions.get(BACKED_OFF):
+            continue
+        served = device.positions[SET][0].target
+        if start.low(served) > 0.0 and script.state.pressures[served] != start.pressures[served]:
+            off = Move(device=tag, position=BACKED_OFF, purpose=Purpose.VENT, locks=False)
+            script.move(Section.REINSTATE, off, "reset")
+            script.restore(Section.REINSTATE, tag, SET, announce=())
+
+
+def _charge(script: Script, start: State) -> None:
+    """Charge by hand what no automatic pump charges."""
+    for source in script.wiring.network.sources:
+        charged = source.gas and source.line in start.fed and start.low(source.line) > 0.0
+        if charged and script.state.pressures[source.line] != start.pressures[source.line]:
+            script.recharge(Section.REINSTATE, source.line, {})
+
+
+def _fill(script: Script, emptied: list[LineId]) -> None:
+    while emptied:
+        script.recharge(Section.REINSTATE, emptied.pop(0), {})
 
 
 def _turn(wiring: Wiring, tag: DeviceTag, position: str, purposes: Mapping[DeviceTag, Purpose]) -> int:
@@ -39,7 +80,7 @@ def _turn(wiring: Wiring, tag: DeviceTag, position: str, purposes: Mapping[Devic
     if purpose is Purpose.REMOTE:
         return 7
     if purpose is Purpose.ENERGY:
-        return 6
+        return _ENERGY
     if device.kind is DeviceKind.REGULATOR:
         return 8
     if device.kind is DeviceKind.GAS_VALVE:

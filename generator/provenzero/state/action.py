@@ -63,7 +63,7 @@ def _state(settled: Settled, positions: Mapping[DeviceTag, str], pistons: Mappin
 
 
 def refill(wiring: Wiring, state: State, line: LineId) -> State:
-    """The state after a line has been given its charge again from outside (nitrogen into a bottle)."""
+    """The state after a stored source has been given its charge again: nitrogen, tank fluid, a bank by a hand pump."""
     pressures = {**state.pressures, line: wiring.network.charged_pag[line]}
     return _state(settle(wiring, state.positions, pressures), state.positions, state.pistons)
 

@@ -11,7 +11,10 @@ LIQUID = LineId("reservoir.liquid")
 
 
 def pump(builder: Builder, item: Pump) -> None:
-    """Compile one pump. A check valve right at its outlet belongs to the pump: neither is a barrier."""
+    """Compile one pump. A check valve right at its outlet belongs to the pump: neither is a barrier.
+
+    A hand pump is always live, unless its lever can be taken off and locked away: that is its isolator.
+    """
     suction = LIQUID
     if any(not _tee(e) for e in item.suction):
         suction = builder.line(f"{item.tag}.suction", f"suction of pump {item.tag}")
@@ -70,7 +73,7 @@ def _without_own_check(elements: tuple[Element, ...]) -> tuple[tuple[Element, ..
 
 
 def _drive(builder: Builder, item: Pump) -> LineId | None:
-    if item.drive is Drive.HAND:
+    if item.drive is Drive.HAND and not isinstance(item.energy, Isolator):
         return None
     if item.drive is Drive.AIR:
         air = LineId("air")
@@ -79,7 +82,7 @@ def _drive(builder: Builder, item: Pump) -> LineId | None:
         drive = builder.line(f"{item.tag}.drive", f"air to pump {item.tag}", Medium.AIR)
         run(builder, (item.energy,), start=air, end=drive, prefix=f"{item.tag}.air", words=f"air to {item.tag}")
         return drive
-    supply = electric_supply(builder, item.supply)
+    supply = electric_supply(builder, f"hand.{item.tag}" if item.drive is Drive.HAND else item.supply)
     if not isinstance(item.energy, Isolator):
         return supply
     drive = builder.line(f"{item.tag}.drive", f"power to pump {item.tag}", Medium.ELECTRIC)

@@ -3,6 +3,7 @@
 from provenzero.network.builder import Builder, passage, way
 from provenzero.network.devices.runs import fitting, run
 from provenzero.network.model import (
+    FULL_OPEN,
     HAND,
     Device,
     DeviceKind,
@@ -16,7 +17,6 @@ from provenzero.unit.model import RETURNS, AirFailure, Bypass, Regulator, Regula
 
 SET = "set"
 BACKED_OFF = "backed_off"
-FULL_OPEN = "full_open"
 
 
 def pressure_line(builder: Builder, item: Regulator) -> None:

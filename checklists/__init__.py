@@ -1,0 +1,1 @@
+"""Jobs, site rules, wording, page templates and fonts: what a site may replace without touching code."""

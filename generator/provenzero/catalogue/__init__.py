@@ -1,0 +1,1 @@
+"""The jobs there are, and the rules of the site."""

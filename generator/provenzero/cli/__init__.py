@@ -1,0 +1,1 @@
+"""The commands, what they print, and their exit codes."""

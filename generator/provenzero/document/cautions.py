@@ -1,0 +1,74 @@
+"""Cautions of the job as a whole, and what to wear and bring."""
+
+from provenzero.catalogue.job import Equipment
+from provenzero.document.brief import Brief
+from provenzero.document.model import Block, Bullets, Notice, Signal, Words
+from provenzero.network.model import LineId, Medium
+from provenzero.plan.model import StepKind
+
+
+def cautions(brief: Brief) -> tuple[Block, ...]:
+    """The panels that apply to this job, the gravest first."""
+    found = [Words(title=brief.say("cautions.title"), paragraphs=())]
+    panels: list[Notice] = []
+    nitrogen = _nitrogen(brief)
+    if nitrogen or brief.plan.job.equipment is Equipment.BOTTLE:
+        panels.append(_caution(brief, Signal.DANGER, "bottle"))
+    panels.append(_caution(brief, Signal.WARNING, "injection"))
+    if nitrogen:
+        panels.append(_caution(brief, Signal.WARNING, "nitrogen", volume=_free_gas(brief)))
+    if brief.plan.unit.banks:
+        panels.append(_caution(brief, Signal.WARNING, "gas"))
+    panels.append(_caution(brief, Signal.WARNING, "control"))
+    panels.append(_caution(brief, Signal.WARNING, "first_turn"))
+    if brief.plan.unit.bypasses:
+        panels.append(_caution(brief, Signal.WARNING, "bypass"))
+    head = max((brief.head_pag(k) for k in brief.plan.zone), default=0.0)
+    if head > 0.0:
+        panels.append(_caution(brief, Signal.CAUTION, "head", pressure=brief.measure.pressure(head)))
+    return (*found, *panels)
+
+
+def protection(brief: Brief) -> Bullets:
+    """What to wear and what to bring, counted from the plan."""
+    plan, measure = brief.plan, brief.measure
+    gauges = sum(step.kind is StepKind.TEST_GAUGE for step in plan.steps)
+    points = [brief.say("protection.wear"), brief.say("protection.locks", locks=str(len(plan.locks)))]
+    if gauges:
+        high = max((plan.start().high(k) for k in plan.zone), default=0.0)
+        points.append(brief.say("protection.gauges", count=str(gauges), pressure=measure.pressure(high)))
+    if brief.figures.room_short() or brief.figures.returned_total_m3 is not None:
+        volume = measure.volumes(brief.figures.returned_total_m3)
+        points.append(brief.say("protection.container", volume=volume))
+    if plan.job.tools:
+        points.append(brief.say("protection.tools", names="; ".join(plan.job.tools)))
+    if plan.job.hazards:
+        points.append(brief.say("protection.job", names="; ".join(plan.job.hazards)))
+    return Bullets(title=brief.say("protection.title"), points=tuple(points))
+
+
+def _caution(brief: Brief, signal: Signal, key: str, **facts: str) -> Notice:
+    return Notice(
+        signal=signal,
+        word=brief.say(f"signal.{signal.value}"),
+        title=brief.say(f"cautions.{key}_title"),
+        lines=brief.wording.points(f"cautions.{key}", **facts),
+    )
+
+
+def _nitrogen(brief: Brief) -> list[LineId]:
+    """Gas lines that the job empties."""
+    plan = brief.plan
+    return [
+        k
+        for k in plan.dead
+        if plan.network.lines[k].medium is Medium.NITROGEN and plan.start().high(k) > plan.isolated().high(k)
+    ]
+
+
+def _free_gas(brief: Brief) -> str:
+    tags = {str(k).partition("/")[0] for k in _nitrogen(brief)}
+    bands = [b.free_gas_m3 for b in brief.figures.banks if b.tag in tags and b.free_gas_m3 is not None]
+    if not bands or len(bands) < len(tags):
+        return brief.measure.volumes(None)
+    return brief.measure.volumes((sum(b[0] for b in bands), sum(b[1] for b in bands)))

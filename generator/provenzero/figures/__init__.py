@@ -1,0 +1,1 @@
+"""Where a unit meets physics: volumes, times, energies and readings, as bands."""

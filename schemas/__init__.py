@@ -1,0 +1,1 @@
+"""JSON Schemas of every file that is read or written, and example files."""
