@@ -1,8 +1,6 @@
 from typing import Any
 
 import pytest
-from hypothesis import given, settings
-from hypothesis import strategies as st
 from tests.properties.oracle import (
     CannotJudgeError,
     check_all,
@@ -13,12 +11,9 @@ from tests.properties.oracle import (
     quiet,
     reversible,
 )
-from tests.properties.oracle_parts.freedom import freedoms
-from tests.properties.oracle_parts.reach import origins, reach
 from tests.properties.oracle_parts.small_unit import (
     FULL,
     Entry,
-    bottles,
     device,
     fixed,
     line,
@@ -29,11 +24,8 @@ from tests.properties.oracle_parts.small_unit import (
     valve,
     way,
 )
-from tests.properties.oracle_parts.stands import flood_every_stand
-from tests.properties.oracle_parts.walk import walk
 
 PROPERTIES = {"dead", "locked", "least", "quiet", "honest", "reversible"}
-NOTHING = (0.0, 0.0)
 
 
 def add(plan: Entry, new: Entry, position: str | None = None) -> None:
@@ -50,31 +42,6 @@ def add_line(plan: Entry, new: Entry, pressures: list[float] | None = None) -> N
 def find(plan: Entry, tag: str) -> Entry:
     found: Entry = next(d for d in plan["network"]["devices"] if d["tag"] == tag)
     return found
-
-
-def circuit_at_rest(
-    lines: dict[str, Any], *devices: Entry, sources: tuple[Entry, ...] = (), **positions: str
-) -> dict[str, tuple[float, float]]:
-    """The pressures that a circuit comes to, from those given for its lines (a tank is added)."""
-    plan = {
-        "network": {
-            "lines": [line(name, "electric" if name.startswith("e_") else "control_fluid") for name in lines]
-            + [line("tank")],
-            "devices": list(devices),
-            "sources": list(sources),
-            "functions": [],
-            "initial": {
-                "positions": {d["tag"]: next(iter(d["positions"])) for d in devices} | positions,
-                "pressures_pag": {k: list(v) for k, v in lines.items()},
-            },
-        },
-        "zone": [],
-        "steps": [],
-        "locks": [],
-        "open_to_vent": [],
-    }
-    pressures = walk(plan).start.pressures
-    return {name: (pressures.low[k], pressures.high[k]) for k, name in enumerate(lines)}
 
 
 class TestSoundPlan:
@@ -209,6 +176,12 @@ class TestLocked:
         spring = {"held": [], "fallen": [way("header open run")]}
         add(plan, fixed("SP") | {"positions": spring, "on_loss": {"line": "air", "position": "fallen"}})
         assert "-(SP in fallen)-> run" in locked(plan).evidence
+
+    def test_many_devices_are_not_tried_stand_by_stand(self) -> None:
+        plan = small_plan()
+        for k in range(16):
+            add(plan, valve(f"XV{k}", "bank", "header"), "closed")
+        assert "by growth only" in locked(plan).evidence
 
 
 def _with_pilot(*, air_locked: bool = False) -> Entry:
@@ -501,147 +474,3 @@ class TestUnreadablePlan:
         change(plan)
         with pytest.raises(CannotJudgeError):
             check_all(plan)
-
-
-class TestPressures:
-    def test_trapped_lines_that_are_joined_hold_anything_in_between(self) -> None:
-        found = circuit_at_rest({"a": (1e6, 2e6), "b": (3e6, 4e6)}, fixed("P", way("a open b")))
-        assert found == {"a": (1e6, 4e6), "b": (1e6, 4e6)}
-
-    def test_a_vent_takes_all_bottles_included(self) -> None:
-        found = circuit_at_rest({"a": FULL}, fixed("P", way("a open tank")), sources=(bottles("b", "a"),))
-        assert found["a"] == NOTHING
-
-    def test_bottles_keep_their_pressure_against_an_empty_line_and_a_leaking_check(self) -> None:
-        devices = (fixed("P", way("a open b")), fixed("C", way("c check a")), fixed("D", way("c open tank")))
-        found = circuit_at_rest(
-            {"a": FULL, "b": NOTHING, "c": NOTHING}, *devices, sources=(bottles("s", "a"),)
-        )
-        assert found == {"a": tuple(FULL), "b": tuple(FULL), "c": NOTHING}
-
-    def test_empty_bottles_keep_nothing(self) -> None:
-        lines = {"a": NOTHING, "b": (1e6, 1e6)}
-        found = circuit_at_rest(lines, fixed("P", way("a open b")), sources=(bottles("s", "a"),))
-        assert found["b"] == (0.0, 1e6)
-
-    def test_a_check_valve_lets_forward_and_leaks_back(self) -> None:
-        lines = {"a": (5e6, 5e6), "b": NOTHING, "c": (8e6, 8e6)}
-        found = circuit_at_rest(lines, fixed("C1", way("a check b")), fixed("C2", way("a check c")))
-        assert found == {"a": (0.0, 8e6), "b": (0.0, 8e6), "c": (0.0, 8e6)}
-
-    def test_trapped_fluid_follows_down_through_check_valves_into_a_vent(self) -> None:
-        lines = {"a": (5e6, 5e6), "b": (4e6, 4e6)}
-        found = circuit_at_rest(lines, fixed("C1", way("a check b")), fixed("C2", way("b check tank")))
-        assert found == {"a": NOTHING, "b": NOTHING}
-
-    def test_a_check_valve_that_may_be_missing_drains_nothing_for_sure(self) -> None:
-        found = circuit_at_rest({"a": (5e6, 5e6)}, fixed("C1", way("maybe a check tank")))
-        assert found == {"a": (0.0, 5e6)}
-
-    def test_a_live_source_keeps_a_vented_line_above_zero(self) -> None:
-        devices = (fixed("R", way("a regulator b", 10e6)), fixed("P", way("b open tank")))
-        found = circuit_at_rest({"a": FULL, "b": NOTHING}, *devices, sources=(live("pump", "a", FULL),))
-        assert found == {"a": tuple(FULL), "b": (0.0, 10e6)}
-
-    def test_a_regulator_gives_its_setting_and_no_more(self) -> None:
-        lines = {"a": FULL, "b": NOTHING, "c": NOTHING, "d": (15e6, 15e6)}
-        devices = [
-            fixed(f"R{k}", way(f"a regulator {k}", p)) for k, p in (("b", 10e6), ("c", 0.0), ("d", 10e6))
-        ]
-        found = circuit_at_rest(lines, *devices, sources=(bottles("s", "a"),))
-        assert found == {"a": tuple(FULL), "b": (10e6, 10e6), "c": NOTHING, "d": (15e6, 15e6)}
-
-    def test_a_regulator_is_not_relied_on_to_drain_what_is_upstream(self) -> None:
-        devices = (fixed("R", way("a regulator b", 10e6)), fixed("P", way("b open tank")))
-        found = circuit_at_rest({"a": FULL, "b": FULL}, *devices, sources=(bottles("s", "a"),))
-        assert found == {"a": (0.0, FULL[1]), "b": NOTHING}
-
-    def test_a_relief_valve_takes_only_what_is_above_its_setting(self) -> None:
-        lines = {"a": (30e6, 30e6), "b": (10e6, 10e6)}
-        devices = [fixed(f"R{k}", way(f"{k} relief tank", 22e6)) for k in lines]
-        assert circuit_at_rest(lines, *devices) == {"a": (22e6, 30e6), "b": (10e6, 10e6)}
-
-    def test_electricity_is_never_trapped(self) -> None:
-        found = circuit_at_rest({"e_a": (400.0, 400.0), "e_b": (400.0, 400.0)}, valve("EB", "e_a", "e_b"))
-        assert found == {"e_a": NOTHING, "e_b": NOTHING}
-
-    def test_a_pump_with_a_dead_drive_gives_nothing_and_one_with_an_uncertain_drive_may(self) -> None:
-        for drive, left in ((NOTHING, NOTHING), ((0.0, 7e5), (0.0, 20.7e6)), ((6e5, 7e5), tuple(FULL))):
-            found = circuit_at_rest({"air": drive, "a": NOTHING}, sources=(live("pump", "a", FULL, "air"),))
-            assert found["a"] == left
-
-    def test_a_device_falls_on_loss_of_its_pilot(self) -> None:
-        spring = device("SP", {"held": [], "fallen": [way("a open tank")]})
-        spring["on_loss"] = {"line": "pilot", "position": "fallen"}
-        for pilot, left in (((5e5, 5e5), (5e6, 5e6)), (NOTHING, NOTHING)):
-            assert circuit_at_rest({"a": (5e6, 5e6), "pilot": pilot}, spring)["a"] == left
-
-    def test_a_device_falls_as_its_pilot_is_drained_in_the_same_moment(self) -> None:
-        spring = device("SP", {"held": [], "fallen": [way("a open tank")]})
-        spring["on_loss"] = {"line": "pilot", "position": "fallen"}
-        drain = fixed("P", way("pilot open tank"))
-        assert circuit_at_rest({"a": (5e6, 5e6), "pilot": (5e5, 5e5)}, spring, drain)["a"] == NOTHING
-
-    def test_a_device_that_takes_and_gives_its_own_pilot_leaves_the_pressure_open(self) -> None:
-        restless = device("SP", {"held": [way("pilot open tank")], "fallen": [way("air open pilot")]})
-        restless["on_loss"] = {"line": "pilot", "position": "fallen"}
-        lines = {"air": (7e5, 7e5), "pilot": NOTHING}
-        found = circuit_at_rest(lines, restless, sources=(live("rig", "air", [7e5, 7e5]),))
-        assert found["pilot"] == (0.0, 7e5)
-
-
-LINES = ("a", "b", "c", "d", "e", "f", "tank")
-_ways = st.builds(
-    lambda one, kind, other: way(f"{one} {kind} {other}"),
-    st.sampled_from(LINES),
-    st.sampled_from(["open", "check", "regulator", "relief", "open"]),
-    st.sampled_from(LINES),
-)
-_positions = st.lists(st.lists(_ways, max_size=2), min_size=2, max_size=3)
-
-
-@st.composite
-def _circuits(draw: st.DrawFn) -> Entry:
-    devices, positions, locks, steps = [], {}, [], []
-    for k in range(draw(st.integers(1, 7))):
-        new = device(f"D{k}", {f"p{n}": ways for n, ways in enumerate(draw(_positions))})
-        new["movable"] = draw(st.booleans()) or k == 0
-        new["moved_by"] = ["hand", *draw(st.lists(st.sampled_from(LINES), max_size=1))]
-        devices.append(new)
-        positions[new["tag"]] = "p0"
-        if draw(st.booleans()):
-            locks.append({"number": k, "device": new["tag"], "position": "p0"})
-            steps.append(step(k, "isolate", lock=k))
-    driven = live("pump", draw(st.sampled_from(LINES)), FULL, draw(st.sampled_from(LINES)))
-    return {
-        "network": {
-            "lines": list(map(line, LINES)),
-            "devices": devices,
-            "sources": [driven, bottles("bottles", draw(st.sampled_from(LINES)))],
-            "functions": [],
-            "initial": {"positions": positions, "pressures_pag": {draw(st.sampled_from(LINES)): FULL}},
-        },
-        "zone": ["f"],
-        "steps": steps,
-        "locks": locks,
-        "open_to_vent": [],
-    }
-
-
-class TestTwoSearches:
-    @settings(max_examples=150, deadline=None)
-    @given(plan=_circuits())
-    def test_growing_one_set_finds_what_trying_every_stand_finds(self, plan: Entry) -> None:
-        walked = walk(plan)
-        state = walked.during_work
-        free = freedoms(walked.circuit, state, state.locked)
-        begin = origins(walked.circuit, state)
-        every_stand = flood_every_stand(walked.circuit, frozenset(begin), free)
-        assert every_stand is not None
-        assert reach(walked.circuit, begin, free).hot == every_stand
-
-    def test_many_devices_are_not_tried_stand_by_stand(self) -> None:
-        plan = small_plan()
-        for k in range(16):
-            add(plan, valve(f"XV{k}", "bank", "header"), "closed")
-        assert "by growth only" in locked(plan).evidence

@@ -55,7 +55,15 @@ class Brief:
         """What a piece of equipment is called."""
         label = self.function(tag)
         device = self.plan.network.devices.get(DeviceTag(tag))
-        return label if label != tag or device is None else f"{tag}, {device.name}"
+        if label != tag:
+            return label
+        if device is not None:
+            return f"{tag}, {device.name}"
+        bank, _, bottle = tag.partition("/")
+        if bottle:
+            return self.say("equipment.bottle", bank=bank, bottle=bottle)
+        kinds = {**dict.fromkeys((p.tag for p in self.plan.unit.pumps), "pump"), "unit": "unit"}
+        return self.say(f"equipment.{kinds[tag]}", tag=tag) if tag in kinds else tag
 
     def line(self, line: str) -> str:
         """The name of a line."""

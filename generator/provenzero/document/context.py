@@ -1,28 +1,9 @@
 """What a document needs besides the plan: its number, its date, the sheet, the units, and what it was made with."""
 
 from dataclasses import dataclass
-from typing import Protocol
 
 from provenzero.document.model import Paper
-
-
-class PrintUnits(Protocol):
-    """Writes SI figures in the units of the site."""
-
-    def pressure(self, pag: float) -> str:
-        """A gauge pressure [Pa] with its unit."""
-
-    def volume(self, m3: float) -> str:
-        """A volume [m3] with its unit."""
-
-    def temperature(self, kelvin: float) -> str:
-        """A temperature [K] with its unit."""
-
-    def energy(self, joule: float) -> str:
-        """An energy [J] with its unit."""
-
-    def duration(self, seconds: float) -> str:
-        """A time [s] with its unit."""
+from provenzero.quantity import Units
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -33,7 +14,7 @@ class PermitContext:
     issued: str
     company: str
     paper: Paper
-    units: PrintUnits
+    units: Units
     tool_version: str
     fingerprint: str
     site: str

@@ -102,7 +102,7 @@ def _banks(brief: Brief) -> Table:
             Text(words=measure.volumes(bank.fluid_m3)),
             Text(words=measure.energies(bank.energy_charged_j)),
             Text(words=measure.energies(bank.energy_drained_j)),
-            Text(words=measure.optional_pressures(bank.precharge_pag)),
+            Text(words=measure.pressures(bank.precharge_pag)),
             Text(words=measure.volumes(bank.free_gas_m3)),
         )
         for bank in brief.figures.banks
@@ -119,7 +119,7 @@ def _trapped(brief: Brief) -> Table:
             Text(words=brief.line(line.line), strong=True),
             Text(words=measure.volume(line.volume_m3)),
             Text(words=measure.volumes(line.returned_m3)),
-            Text(words=measure.optional_pressures(line.rise_pa_per_k)),
+            Text(words=measure.pressures(line.rise_pa_per_k)),
         )
         for line in brief.figures.trapped
     )

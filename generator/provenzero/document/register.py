@@ -88,9 +88,9 @@ def _indications(brief: Brief, steps: list[Step]) -> list[str]:
         for expect in step.expect:
             shows = brief.measure.pressures(brief.band(expect))
             found.append(brief.say("zero_table.cell", gauge=expect.gauge, expected=shows, step=step.id))
-    found += [
-        brief.say("zero_table.test_gauge", step=step.id) for step in steps if step.kind is StepKind.TEST_GAUGE
-    ]
+    for step in steps:
+        if step.kind is StepKind.TEST_GAUGE:
+            found += [brief.say("zero_table.test_gauge", step=step.id)] * (_TWO - len(found))
     return found
 
 

@@ -29,14 +29,21 @@ def cards(brief: Brief, section: Section) -> tuple[StepCard, ...]:
 def action(brief: Brief, step: Step) -> str:
     """What a step asks for, in one short sentence."""
     facts = _facts(brief, step)
-    kind = step.kind.value
-    if step.kind is StepKind.WATCH and brief.context.hold_s is None:
-        return brief.say("step.watch.text_unknown")
+    kind = _key(brief, step)
     if brief.wording.has(f"step.{kind}.text"):
         return brief.say(f"step.{kind}.text", **facts)
     device = brief.device(str(step.device))
     keys = (f"act.{device.kind.value}.{step.position}", f"act.{step.position}", "act.other")
     return brief.wording.first(*keys, **facts)
+
+
+def _key(brief: Brief, step: Step) -> str:
+    """Under which key the words of a step stand."""
+    if step.kind is StepKind.WATCH and brief.context.hold_s is None:
+        return "watch_unknown"
+    if step.kind is StepKind.TEST_GAUGE and step.facts.get("gauges") == "0":
+        return "test_gauges"
+    return step.kind.value
 
 
 def sentence(brief: Brief, step: Step) -> str:
@@ -68,7 +75,7 @@ def _facts(brief: Brief, step: Step) -> dict[str, str]:
 
 
 def _card(brief: Brief, step: Step, warnings: tuple[Notice, ...]) -> StepCard:
-    kind = step.kind.value
+    kind = _key(brief, step)
     outcome, otherwise, asks = f"step.{kind}.expected", f"step.{kind}.otherwise", f"step.{kind}.asks"
     figures = brief.figures.steps.get(step.id, StepFigures())
     return StepCard(
@@ -113,7 +120,7 @@ def _reading(brief: Brief, expect: Expect) -> Reading:
         gauge=expect.gauge,
         place="" if gauge is None else gauge.location,
         expected=brief.measure.pressures(brief.band(expect)),
-        label=brief.measure.pressure_unit(),
+        label=brief.measure.gauge_unit(),
     )
 
 

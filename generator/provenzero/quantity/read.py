@@ -11,7 +11,7 @@ _SHOWN: Final = 40
 _MIXED: Final = r"(?:(?P<whole>\d+)[- ])?(?P<over>\d+)/(?P<under>\d+)"
 _DECIMAL: Final = r"(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d{1,2})?"
 _QUANTITY: Final = re.compile(
-    rf"(?P<sign>[+-]?)(?:{_MIXED}|(?P<decimal>{_DECIMAL})) ?(?P<unit>.*)",
+    rf"(?P<sign>[+-]?)(?:{_MIXED}|(?P<decimal>{_DECIMAL})) ?(?P<unit>[^0-9+. -].*)?",
     re.ASCII,
 )
 _COMMA_THOUSANDS: Final = re.compile(r"[+-]?\d{1,3}(?:,\d{3})+(?![\d,])", re.ASCII)
@@ -55,7 +55,7 @@ def parse(text: str, dimension: Dimension) -> float:
     match = _QUANTITY.fullmatch(plain)
     if match is None:
         raise QuantityError(found, f"one number and its unit, such as {measure.example}")
-    scale = _scale(match["unit"], found, dimension)
+    scale = _scale(match["unit"] or "", found, dimension)
     number = _number(match, found, dimension)
     si = si_value(number, scale)
     _refuse_impossible(si, found, dimension)
@@ -115,8 +115,8 @@ def _scale(unit: str, found: str, dimension: Dimension) -> Scale:
     if dimension is Dimension.PRESSURE and _ABSOLUTE.fullmatch(unit):
         raise QuantityError(
             f"{found}, an absolute pressure",
-            "a gauge pressure, as a gauge shows it: take off the pressure of the air (14.7 psi, 1.01 bar) and "
-            f"write {measure.example}",
+            "a gauge pressure, as a gauge shows it: take off the pressure of the air (14.7 psi, 1.01 bar) "
+            f"and write {measure.example}",
         )
     if _IMPERIAL.fullmatch(unit):
         raise QuantityError(
@@ -137,7 +137,7 @@ def _number(match: re.Match[str], found: str, dimension: Dimension) -> Fraction:
     if match["decimal"] is not None:
         return sign * Fraction(match["decimal"])
     under = int(match["under"])
-    if match["unit"].casefold() not in _INCHES or under not in _UNDERS or int(match["over"]) >= under:
+    if match["unit"] not in _INCHES or under not in _UNDERS or int(match["over"]) >= under:
         raise QuantityError(
             f"{found}, a fraction",
             f"a decimal number, such as {MEASURES[dimension].example}; only inches take halves to 64ths",

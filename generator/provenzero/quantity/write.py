@@ -85,8 +85,8 @@ def _up(value: float) -> float:
 class Units:
     """The units a site prints in, one or two of each kind: the second stands in brackets behind the first.
 
-    A value other than zero is never printed as zero: the smallest step stands for what is smaller. All methods
-    raise ValueError for a value that is not finite.
+    A value other than zero is never printed as zero: the smallest step stands for what is smaller. Every
+    method raises ValueError for a value that is not finite.
     """
 
     pressure_units: tuple[PressureUnit, ...]

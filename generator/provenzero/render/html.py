@@ -83,7 +83,7 @@ def _fixed() -> str:
 def _page(document: Document) -> str:
     """What stands on every sheet: its size, its marks, what it belongs to, page x of y."""
     words = document.words
-    known = "   ".join(f"{label} {value}" for label, value in document.identity.facts)
+    known = "   ".join(f"{label} {value}".replace(" ", "\u00a0") for label, value in document.identity.facts)
     marks = "   ".join(document.identity.marks)
     number = f"{_string(words['page'])} ' ' counter(page) ' ' {_string(words['of'])} ' ' counter(pages)"
     mark = _MARK % _string(marks) if marks else ""

@@ -48,10 +48,6 @@ class _Bodies:
     swallows: set[int] = field(default_factory=set)
     fed: set[int] = field(default_factory=set)
 
-    def loose(self, body: int) -> bool:
-        """Nothing keeps its pressure up and nothing has taken it away: trapped fluid."""
-        return body not in self.swallows and body not in self.surely_live and body not in self.gas
-
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class _Link:
@@ -171,7 +167,7 @@ def _feed(circuit: Circuit, bodies: _Bodies, running: Running) -> None:
 def _links(circuit: Circuit, ways: tuple[Way, ...], bodies: _Bodies) -> Iterator[_Link]:
     for way in ways:
         up, down = bodies.of[way.start], bodies.of[way.end]
-        if up != down and not (way.kind == "open" and way.certain):
+        if up != down:
             from_vent, to_vent = circuit.vent[way.start], circuit.vent[way.end]
             yield _Link(way=way, up=up, down=down, from_vent=from_vent, to_vent=to_vent)
             if way.kind == "open":
@@ -190,7 +186,7 @@ def _mark_fed(bodies: _Bodies, links: tuple[_Link, ...]) -> None:
 
 def _drain_through_checks(bodies: _Bodies, links: tuple[_Link, ...]) -> None:
     """What stands upstream of a check valve follows down into a vent, unless something keeps coming."""
-    sure = [k for k in links if k.way.kind == "check" and k.way.certain and not k.from_vent]
+    sure = [k for k in links if k.way.kind == "check" and k.way.certain]
     grew = True
     while grew:
         grew = False
@@ -198,7 +194,6 @@ def _drain_through_checks(bodies: _Bodies, links: tuple[_Link, ...]) -> None:
             sinks = link.down in bodies.swallows and link.down not in bodies.fed
             if sinks and link.up not in bodies.fed and link.up not in bodies.swallows:
                 bodies.swallows.add(link.up)
-                bodies.gas.discard(link.up)
                 bodies.low[link.up] = bodies.high[link.up] = 0.0
                 grew = True
 
@@ -222,19 +217,17 @@ def _raise_highs(circuit: Circuit, bodies: _Bodies, links: tuple[_Link, ...]) ->
 
 
 def _floors(bodies: _Bodies, links: tuple[_Link, ...]) -> dict[int, float]:
-    """The pressure that a source surely keeps up in each body [Pa gauge]."""
-    emptying = {k.up for k in links if k.supplies and k.down in bodies.swallows}
-    emptying -= bodies.surely_live
-    bodies.gas -= emptying
-    kept = (bodies.surely_live - bodies.vented) | bodies.gas
-    floor = {body: bodies.low[body] if body in kept else 0.0 for body in bodies.low}
-    sure = [k for k in links if k.way.certain and k.supplies]
+    """The pressure that a source surely keeps up in each body [Pa gauge]; none where it flows out."""
+    emptied = bodies.swallows | {k.up for k in links if k.supplies and k.down in bodies.swallows}
+    kept = bodies.surely_live | (bodies.gas - emptied)
+    floor = {body: low if body in kept else 0.0 for body, low in bodies.low.items()}
+    sure = [k for k in links if k.way.certain and k.supplies and k.down not in emptied]
     grew = True
     while grew:
         grew = False
         for link in sure:
             arriving = link.forward(floor[link.up])
-            if link.down not in bodies.swallows and arriving > floor[link.down]:
+            if arriving > floor[link.down]:
                 floor[link.down] = arriving
                 grew = True
     return floor
@@ -243,35 +236,21 @@ def _floors(bodies: _Bodies, links: tuple[_Link, ...]) -> dict[int, float]:
 def _drop_lows(
     bodies: _Bodies, links: tuple[_Link, ...], floor: Mapping[int, float], base_high: Mapping[int, float]
 ) -> None:
+    """Let the lows fall, as far as their floor, wherever one body may lose pressure to another."""
     low = bodies.low
     for body, kept in floor.items():
         low[body] = max(low[body], kept)
+    leaks = [
+        (link.up, link.down, link.way.set_pag if link.way.kind == "relief" else 0.0)
+        for link in links
+        if link.way.kind != "regulator" or base_high[link.down] < link.way.set_pag  # else it takes nothing
+    ]
+    leaks += [(link.down, link.up, 0.0) for link in links]
     fell = True
     while fell:
         fell = False
-        for link in links:
-            for body, other in _leaks(bodies, link, base_high):
-                least = low[other]
-                if link.way.kind == "relief" and body == link.up:
-                    least = max(least, link.way.set_pag)
-                reached = max(least, floor[body])
-                if reached < low[body]:
-                    low[body] = reached
-                    fell = True
-
-
-def _leaks(bodies: _Bodies, link: _Link, base_high: Mapping[int, float]) -> Iterator[tuple[int, int]]:
-    """Which trapped body may lose pressure to which other through this passage."""
-    if bodies.loose(link.up) and _draws(link, base_high):
-        yield link.up, link.down
-    if bodies.loose(link.down):
-        yield link.down, link.up
-
-
-def _draws(link: _Link, base_high: Mapping[int, float]) -> bool:
-    """A regulator takes from upstream while downstream is below its setting; a relief valve above it."""
-    if link.way.kind == "regulator":
-        return link.way.set_pag > base_high[link.down]
-    if link.way.kind == "relief":
-        return base_high[link.up] > link.way.set_pag
-    return True
+        for body, other, above in leaks:
+            reached = max(low[other], above, floor[body])
+            if reached < low[body]:
+                low[body] = reached
+                fell = True

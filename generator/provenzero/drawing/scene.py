@@ -1,0 +1,86 @@
+"""The unit, its network and its marks, with the questions that a drawing asks of them."""
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+
+from provenzero.drawing.marks import Marks, Vent
+from provenzero.drawing.model import Role
+from provenzero.drawing.wording import Wording
+from provenzero.network.devices.pumps import LIQUID
+from provenzero.network.model import DeviceTag, LineId, Network
+from provenzero.unit.model import HEADER, RETURNS, CheckValve, Element, Reducer, Strainer, Unit, Valve
+
+Inline = Valve | CheckValve | Strainer | Reducer
+TOLD = frozenset({Role.ZONE, Role.TRAPPED, Role.UNKNOWN})
+AIR = LineId("air")
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Scene:
+    """What is drawn. `letters`: the letter in the ring of each line that goes through many places."""
+
+    unit: Unit
+    network: Network
+    marks: Marks
+    wording: Wording
+    letters: Mapping[LineId, str]
+
+    def position(self, tag: str) -> str:
+        """Where a device stands."""
+        key = DeviceTag(tag)
+        return self.marks.positions.get(key, self.network.devices[key].normal)
+
+    def lock(self, tag: str) -> int | None:
+        """The number of the lock on a device."""
+        return self.marks.locks.get(DeviceTag(tag))
+
+    def vent(self, tag: str) -> Vent | None:
+        """Where a device that is kept open lets out to."""
+        return self.marks.open_vents.get(DeviceTag(tag))
+
+    def ends(self, tag: str) -> tuple[LineId, LineId]:
+        """The two lines that a device joins, in the order of flow, as its most open position has them."""
+        passages = max(self.network.devices[DeviceTag(tag)].positions.values(), key=len)
+        for items in self.network.devices[DeviceTag(tag)].positions.values():
+            if items and items[0].source in (passages[0].source, passages[0].target):
+                passages = items
+                break
+        return passages[0].source, passages[0].target
+
+    def port(self, equipment: str, name: str) -> LineId | None:
+        """The line at a port of a piece of equipment."""
+        found = self.network.opened(equipment, (name,))
+        return found[0] if found else None
+
+    def told(self, line: LineId) -> str:
+        """The word that must stand on a line, empty if none."""
+        words = self.wording
+        return {Role.ZONE: words.opened, Role.TRAPPED: words.trapped, Role.UNKNOWN: words.unknown}.get(
+            self.marks.role(line), ""
+        )
+
+    def name(self, line: LineId) -> str:
+        """The name of a bus as it stands on the drawing."""
+        fixed = {
+            LineId(HEADER): self.wording.header, LineId(RETURNS): self.wording.returns, LIQUID: self.wording.suction,
+            AIR: self.wording.air,
+        }
+        return fixed.get(line) or self.wording.pressure_line.format(name=line)
+
+
+def letters_of(unit: Unit) -> dict[LineId, str]:
+    """A letter for every line that many things join: the first of its name that is free, else of the alphabet."""
+    lines = [HEADER, *(item.serves for item in unit.regulators), RETURNS, "suction"]
+    lines += [bank.attached_to for bank in unit.banks] + [pump.delivers_to for pump in unit.pumps]
+    lines += [item.delivers_to for item in unit.nitrogen_backups]
+    found: dict[str, str] = {}
+    for line in dict.fromkeys(lines):
+        choices = [c for c in line.upper() if c.isalpha()] + [chr(c) for c in range(ord("A"), ord("Z") + 1)]
+        free = (c for c in choices if c not in found.values())
+        found[line] = next(free, str(len(found)))
+    return {LIQUID if line == "suction" else LineId(line): letter for line, letter in found.items()}
+
+
+def is_inline(element: Element) -> bool:
+    """Whether the fluid goes through the element (or past it)."""
+    return isinstance(element, (Valve, CheckValve, Strainer, Reducer))
