@@ -137,7 +137,7 @@ class StepCard:
     """One step on paper: one action, how it must end, the boxes for the hand, what to do if it is not so.
 
     `device`: tag, plain name and location. `speaks_of`: the lines meant, where no device is. `unlock`, `lock`: the lock
-    that comes off before the action or goes on with it. `outcome`: what eye and ear must find. `asks`: labels of further
+    that comes off before the action or goes on with it. `outcomes`: what eye and ear must find. `asks`: labels of further
     boxes. `figures`: volumes and times to expect. `hold`: the words of a hold point, empty if the step is none.
     """
 
@@ -149,7 +149,7 @@ class StepCard:
     unlock: str = ""
     lock: str = ""
     readings: tuple[Reading, ...] = ()
-    outcome: str = ""
+    outcomes: tuple[str, ...] = ()
     asks: tuple[str, ...] = ()
     figures: tuple[str, ...] = ()
     why: str = ""

@@ -38,7 +38,7 @@ def _announced(brief: Brief, step: Step) -> list[Notice]:
         notices.append(panel(brief, Signal.WARNING, "moves", names=brief.functions(step.moves_function)))
     if step.starts_pump is not None:
         notices.append(panel(brief, Signal.WARNING, "pump", names=step.starts_pump))
-    if step.recharges is not None:
+    if step.recharges is not None and _medium(brief, step.recharges) is Medium.NITROGEN:
         notices.append(panel(brief, Signal.WARNING, "charge"))
     return notices
 

@@ -6,7 +6,7 @@ from provenzero.document.brief import Brief
 from provenzero.document.figures import StepFigures
 from provenzero.document.model import Notice, Reading, StepCard
 from provenzero.document.panels import panels
-from provenzero.network.model import Device
+from provenzero.network.model import Device, Medium
 from provenzero.plan.model import Expect, Section, Step, StepKind
 
 _NAMED = {"keeps_out", "keeps_open", "let_out"}
@@ -43,16 +43,16 @@ def _key(brief: Brief, step: Step) -> str:
         return "watch_unknown"
     if step.kind is StepKind.TEST_GAUGE and step.facts.get("gauges") == "0":
         return "test_gauges"
+    if step.recharges is not None and brief.plan.network.lines[step.recharges].medium is not Medium.NITROGEN:
+        return "refill"
     return step.kind.value
 
 
 def sentence(brief: Brief, step: Step) -> str:
     """A step in one piece of text that stands alone: action, device and place, lock."""
-    parts = [action(brief, step)]
-    if step.device is not None:
-        parts.append(f"({', '.join(_device(brief.device(step.device)))})")
-    parts += [words for words in (_unlock(brief, step), _lock(brief, step)) if words]
-    return " ".join(parts)
+    device = "" if step.device is None else f"({', '.join(_device(brief.device(step.device)))})"
+    unlock, lock = (f"{words}." if words else "" for words in (_unlock(brief, step), _lock(brief, step)))
+    return " ".join(words for words in (unlock, action(brief, step), device, lock) if words)
 
 
 def _facts(brief: Brief, step: Step) -> dict[str, str]:
@@ -63,20 +63,20 @@ def _facts(brief: Brief, step: Step) -> dict[str, str]:
         "position": brief.position(step.position),
         "was": brief.position(step.was),
         "line": brief.line(step.recharges or ""),
-        "gauges": brief.some(dict.fromkeys(e.gauge for e in step.expect)),
+        "gauges": brief.wording.names(tuple(dict.fromkeys(e.gauge for e in step.expect))),
         "hold": "" if brief.context.hold_s is None else brief.measure.duration(brief.context.hold_s),
         **step.facts,
     }
     if "function" in step.facts:
         facts["function"] = brief.function(step.facts["function"])
-    if step.kind is StepKind.READ_ZERO:
-        facts["gauges"] = brief.some(dict.fromkeys(e.gauge for e in step.expect))
+    if "on" in step.facts:
+        facts["on"] = brief.equipment(step.facts["on"])
     return facts
 
 
 def _card(brief: Brief, step: Step, warnings: tuple[Notice, ...]) -> StepCard:
     kind = _key(brief, step)
-    outcome, otherwise, asks = f"step.{kind}.expected", f"step.{kind}.otherwise", f"step.{kind}.asks"
+    outcomes, otherwise, asks = f"step.{kind}.outcomes", f"step.{kind}.otherwise", f"step.{kind}.asks"
     figures = brief.figures.steps.get(step.id, StepFigures())
     return StepCard(
         number=step.id,
@@ -87,7 +87,7 @@ def _card(brief: Brief, step: Step, warnings: tuple[Notice, ...]) -> StepCard:
         unlock=_unlock(brief, step),
         lock=_lock(brief, step),
         readings=tuple(_reading(brief, e) for e in step.expect),
-        outcome=brief.say(outcome) if brief.wording.has(outcome) else "",
+        outcomes=brief.wording.lists.get(outcomes, ()),
         asks=brief.wording.lists.get(asks, ()),
         figures=(*_figures(brief, figures), *_column(brief, step.expect)),
         why=_why(brief, step),

@@ -13,6 +13,7 @@ from provenzero.unit.model import HEADER, RETURNS, CheckValve, Element, Reducer,
 Inline = Valve | CheckValve | Strainer | Reducer
 TOLD = frozenset({Role.ZONE, Role.TRAPPED, Role.UNKNOWN})
 AIR = LineId("air")
+_THROUGH = ("open", "on", "fitted")
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -39,13 +40,10 @@ class Scene:
         return self.marks.open_vents.get(DeviceTag(tag))
 
     def ends(self, tag: str) -> tuple[LineId, LineId]:
-        """The two lines that a device joins, in the order of flow, as its most open position has them."""
-        passages = max(self.network.devices[DeviceTag(tag)].positions.values(), key=len)
-        for items in self.network.devices[DeviceTag(tag)].positions.values():
-            if items and items[0].source in (passages[0].source, passages[0].target):
-                passages = items
-                break
-        return passages[0].source, passages[0].target
+        """The two lines that a device joins when it is open, in the order of flow."""
+        positions = self.network.devices[DeviceTag(tag)].positions
+        way = next(positions[name] for name in _THROUGH if name in positions)[0]
+        return way.source, way.target
 
     def port(self, equipment: str, name: str) -> LineId | None:
         """The line at a port of a piece of equipment."""

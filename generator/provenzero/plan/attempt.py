@@ -161,12 +161,13 @@ def isolate(wiring: Wiring, state: State, zone: frozenset[LineId], region: Regio
     if not obstacles:
         locks = needed(wiring, reached, zone, locks, open_lines)
     now_held = vented(wiring, locks)
+    weak = _weak(wiring, reached, zone, region, locks)
     return Attempt(
         region=region,
         made=tuple(made),
         locks=locks,
         open_to_vent=tuple(line for line in open_lines if line in now_held),
-        unheld=tuple(k for k in wiring.network.lines if k in _weak(wiring, reached, zone, region, locks)),
+        unheld=tuple(k for k in wiring.network.lines if k in weak),
         state=reached,
         loss=loss(wiring, region.dead, locks),
         obstacles=tuple(obstacles),

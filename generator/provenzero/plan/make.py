@@ -137,12 +137,14 @@ def _isolate(making: _Making) -> dict[DeviceTag, Purpose]:
 
 def _verify(making: _Making) -> None:
     script, wiring = making.script, making.wiring
-    for item in making.functions():
-        four_way = next(f for f in making.unit.functions if f.name == item.name).valve
-        for panel in four_way.panels:
-            script.say(
-                Section.VERIFY, StepKind.TRY_OPERATE, facts={"function": item.name, "panel": panel}, reason="try_operate"
-            )
+    names = [a.name for a in making.functions()]
+    commanded = [f for f in making.unit.functions if f.name in names]
+    for panel in making.unit.panels:
+        tried = [f.name for f in commanded if panel.tag in f.valve.panels]
+        if tried:
+            facts = {"function": ", ".join(tried), "panel": panel.tag}
+            script.say(Section.VERIFY, StepKind.TRY_OPERATE, facts=facts, reason="try_operate")
+    unseen: dict[int, list[LineId]] = {}
     for group in _groups(making):
         shown = gauges_of(wiring, script.state, group[0])
         if shown:
@@ -151,10 +153,12 @@ def _verify(making: _Making) -> None:
                 expect=readings(wiring, script.state, [g.reads for g in shown]), reason="zero_read",
             )
         if len(shown) < _INDICATIONS:
-            script.say(
-                Section.VERIFY, StepKind.TEST_GAUGE, lines=group, facts={"gauges": str(len(shown))},
-                reason="second_indication",
-            )
+            unseen.setdefault(len(shown), []).extend(group)
+    for count, lines in unseen.items():
+        script.say(
+            Section.VERIFY, StepKind.TEST_GAUGE, lines=tuple(lines), facts={"gauges": str(count)},
+            reason="second_indication",
+        )
     script.say(Section.VERIFY, StepKind.WATCH, lines=making.zone, hold_point=True, reason="hold")
     script.say(Section.VERIFY, StepKind.RELEASE_WORK, hold_point=True, reason="release_work")
 

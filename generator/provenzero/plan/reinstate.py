@@ -98,16 +98,21 @@ def _next(
     """The device whose turn it is: in each turn first what makes nothing happen, then what a step can announce."""
     wiring = script.wiring
     for turn in sorted({turns[tag] for tag in pending}):
-        effects = {t: act(wiring, script.state, t, start.positions[t]) for t in pending if turns[t] == turn}
-        for good in (_nothing, _only_pumps, _announced):
+        effects: dict[DeviceTag, Effect] = {}
+        for tag in pending:
+            if turns[tag] != turn:
+                continue
+            effect = act(wiring, script.state, tag, start.positions[tag])
+            if _wasted(wiring, script.state, effect):
+                continue
+            if effect.quiet:
+                return tag
+            effects[tag] = effect
+        for good in (_only_pumps, _announced):
             for tag, effect in effects.items():
-                if good(effect) and not _wasted(wiring, script.state, effect):
+                if good(effect):
                     return tag
     return None
-
-
-def _nothing(effect: Effect) -> bool:
-    return effect.quiet
 
 
 def _only_pumps(effect: Effect) -> bool:

@@ -1,7 +1,7 @@
 """YAML to plain data that knows the line and column of every key and value.
 
-Only the JSON part of YAML 1.2 is taken: words such as `no` and `on` stay words, dates stay text, and aliases, tags,
-repeated keys and numbers that are not finite are refused, since each has made a file say what nobody meant.
+Only the JSON part of YAML 1.2 is taken: words such as `no` and `on` stay words, dates stay text, and aliases,
+tags, repeated keys and numbers that are not finite are refused: each has made a file say what nobody meant.
 """
 
 import math
@@ -70,10 +70,10 @@ class Document:
         """The value at a path that is in the document; KeyError or IndexError if it is not."""
         value: Value = self.data
         for step in path:
-            if isinstance(value, dict) and isinstance(step, str):
-                value = value[step]
-            elif isinstance(value, list) and isinstance(step, int):
-                value = value[step]
+            if isinstance(value, dict):
+                value = value[str(step)]
+            elif isinstance(value, list):
+                value = value[int(step)]
             else:
                 raise KeyError(step)
         return value
@@ -116,10 +116,6 @@ def load_text(text: str, file: str) -> Document | list[Finding]:
     return Document(file=file, data=builder.root, values=builder.values, keys=builder.keys)
 
 
-class _TooMuch(Exception):
-    """The file is bigger than any description; the rest of it is not read."""
-
-
 @dataclass(slots=True)
 class _Open:
     """A mapping or a list whose end has not come yet. `key` is that of the value to come."""
@@ -131,24 +127,27 @@ class _Open:
 
 @dataclass(slots=True, kw_only=True)
 class _Builder:
-    """Builds the data from the parser's events, without recursion, so that no nesting can exhaust the stack."""
+    """Builds the data from the parser's events, without recursion, so that no nesting exhausts the stack.
+
+    `over`: the file is bigger than any description, and the rest of it is not read.
+    """
 
     file: str
     root: Value = None
     values: dict[Steps, Position] = field(default_factory=dict)
     keys: dict[Steps, Position] = field(default_factory=dict)
     findings: list[Finding] = field(default_factory=list)
+    over: bool = False
     _stack: list[_Open] = field(default_factory=list)
     _documents: int = 0
     _count: int = 0
 
     def take(self, events: Iterable[yaml.Event]) -> None:
-        """Take all events, up to the point where the file is too much."""
-        try:
-            for event in events:
-                self._take_one(event)
-        except _TooMuch:
-            pass
+        """Take the events, up to the point where the file is too much."""
+        for event in events:
+            self._take_one(event)
+            if self.over:
+                return
 
     def report(self, position: Position, found: str, expected: str, path: Steps = ()) -> None:
         """Note a finding."""
@@ -157,13 +156,14 @@ class _Builder:
         self.findings.append(Finding(place=place, found=found, expected=expected))
 
     def _take_one(self, event: yaml.Event) -> None:
-        position = (event.start_mark.line + 1, event.start_mark.column + 1)
+        mark = event.start_mark
+        position = (mark.line + 1, mark.column + 1) if mark is not None else (1, 1)
         match event:
             case yaml.DocumentStartEvent():
                 self._documents += 1
                 if self._documents > 1:
                     self.report(position, "a second document after '---'", "one document in a file")
-                    raise _TooMuch
+                    self.over = True
             case yaml.AliasEvent():
                 self._refuse(position, f"the alias '*{event.anchor}'", "the value itself, written out")
             case yaml.ScalarEvent():
@@ -177,7 +177,7 @@ class _Builder:
 
     def _take_scalar(self, event: yaml.ScalarEvent, position: Position) -> None:
         if event.tag is not None:
-            self._refuse(position, f"the tag '{event.tag}'", "a plain value without a tag")
+            self._refuse(position, f"the tag {_short(event.tag)}", "a plain value without a tag")
         elif self._awaits_key():
             self._take_key(event.value, position)
         else:
@@ -198,14 +198,16 @@ class _Builder:
     def _open(self, container: dict[str, Value] | list[Value], event: yaml.Event, position: Position) -> None:
         tag = getattr(event, "tag", None)
         if tag is not None:
-            self.report(position, f"the tag '{tag}'", "a plain value without a tag", self._here())
+            self.report(position, f"the tag {_short(tag)}", "a plain value without a tag", self._here())
         if self._awaits_key():
             self.report(position, f"{_kind(container)} as a key", "a word before the colon", self._here())
-            raise _TooMuch
+            self.over = True
+            return
         if len(self._stack) >= DEEPEST:
             found = f"values nested more than {DEEPEST} deep"
             self.report(position, found, "the few levels that the schema knows")
-            raise _TooMuch
+            self.over = True
+            return
         path = self._here()
         self._add(container, position)
         self._stack.append(_Open(container, path))
@@ -214,7 +216,8 @@ class _Builder:
         self._count += 1
         if self._count > MOST_VALUES:
             self.report(position, f"more than {MOST_VALUES} values", "one unit, job or record in a file")
-            raise _TooMuch
+            self.over = True
+            return
         self.values[self._here()] = position
         if not self._stack:
             self.root = value
@@ -276,6 +279,10 @@ def _syntax_finding(error: yaml.MarkedYAMLError, text: str, file: str) -> Findin
         mark = error.context_mark
     place = Place(file=file, line=mark.line + 1 if mark else 1, column=mark.column + 1 if mark else 1)
     return Finding(place=place, found=fault.found, expected=fault.expected)
+
+
+def _short(tag: str) -> str:
+    return f"'{tag.replace('tag:yaml.org,2002:', '!!')}'"
 
 
 def _kind(value: Value) -> str:

@@ -6,15 +6,14 @@ from typing import Final
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Fault:
-    """A fault of syntax. `at_start`: the cure lies where the broken thing began, not where the parser gave up."""
+    """A fault of syntax. `at_start`: the cure lies where the broken thing began, not where parsing ended."""
 
     found: str
     expected: str
     at_start: bool = False
 
 
-_QUOTES: Final = "quotes around text that holds ': '"
-# In the order of trial: a piece of the parser's problem or context, and what it means to the writer of the file.
+# In the order of trial: pieces of the parser's context and problem, and what they mean to the file's writer.
 _FAULTS: Final = (
     (
         ("while scanning a quoted scalar", "end of stream"),
@@ -26,6 +25,10 @@ _FAULTS: Final = (
             found="a backslash that stands for nothing",
             expected="single quotes around text with a backslash, or the backslash doubled",
         ),
+    ),
+    (
+        ("nesting depth",),
+        Fault(found="values nested very deep", expected="the few levels that the schema knows"),
     ),
     (
         ("while parsing a flow sequence",),
@@ -55,8 +58,8 @@ _FAULTS: Final = (
         ("mapping values are not allowed",),
         Fault(
             found="a colon where no value may begin",
-            expected="one 'key: value' a line with a space after the colon, the keys of one level in one column, "
-            f"and {_QUOTES}",
+            expected="one 'key: value' a line with a space after the colon, the keys of one level in one "
+            "column, and quotes around text that holds ': '",
         ),
     ),
     (

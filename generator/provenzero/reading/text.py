@@ -12,7 +12,7 @@ _UTF_16: Final = (b"\xff\xfe", b"\xfe\xff")
 
 
 def read_text(path: Path) -> str | list[Finding]:
-    """The text of a file in UTF-8, of at most 1 MiB and without control characters; findings if it is not that."""
+    """The text of a file in UTF-8 of at most 1 MiB without control characters; findings if it is not that."""
     file = str(path)
     try:
         with path.open("rb") as stream:
