@@ -36,8 +36,6 @@ def properties(brief: Brief) -> Table:
         result, evidence = brief.say("proof.missing"), brief.say("proof.missing_evidence")
         if verdict is not None:
             result, evidence = brief.say("proof.holds" if verdict.holds else "proof.fails"), verdict.evidence
-        elif key == "honest":
-            result, evidence = brief.say("proof.by_print"), brief.say("proof.by_print_evidence")
         rows.append(
             (
                 Text(words=name, strong=True), Text(words=brief.say(f"proof.meanings.{key}")),

@@ -36,9 +36,7 @@ def head(brief: Brief) -> tuple[Block, ...]:
 def unproven(brief: Brief) -> tuple[str, ...]:
     """Names of the properties that do not hold or were not checked."""
     names = brief.wording.branch("proof.names")
-    return tuple(
-        words for key, words in names.items() if key != "honest" and not _holds(brief, key)
-    )
+    return tuple(words for key, words in names.items() if not _holds(brief, key))
 
 
 def _holds(brief: Brief, key: str) -> bool:

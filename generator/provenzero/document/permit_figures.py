@@ -132,7 +132,9 @@ def _emptied(plan: Plan, before: State, after: State) -> list[tuple[Bank, int]]:
     gone = {s.id for s in plan.network.sources if s.gas and before.high(s.line) > 0.0 >= after.high(s.line)}
     found = []
     for bank in plan.unit.banks:
-        bottles = bank.bottles if bank.tag in gone else sum(f"{bank.tag}/{n}" in gone for n in range(1, bank.bottles + 1))
+        bottles = (
+            bank.bottles if bank.tag in gone else sum(f"{bank.tag}/{n}" in gone for n in range(1, bank.bottles + 1))
+        )
         if bottles:
             found.append((bank, bottles))
     return found
@@ -235,7 +237,5 @@ def _pump_test(plan: Plan, step: Step, temperature: Band) -> StepFigures | None:
     charges = [charge_of(b) for b in plan.unit.banks if b.attached_to == pump.delivers_to]
     if pump.flow_m3_s is None or pump.start_pressure_pag is None or not charges or any(c is None for c in charges):
         return StepFigures(accept_pag=accept)
-    parts = [
-        charging_s(c, accept[0], accept[1], temperature, pump.flow_m3_s) for c in charges if c is not None
-    ]
+    parts = [charging_s(c, accept[0], accept[1], temperature, pump.flow_m3_s) for c in charges if c is not None]
     return StepFigures(accept_pag=accept, time_s=(sum(p[0] for p in parts), sum(p[1] for p in parts)))

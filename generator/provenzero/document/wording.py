@@ -4,12 +4,18 @@ from collections.abc import Mapping
 from dataclasses import dataclass
 from string import Formatter
 
+from provenzero.reading.lines import Document, load_text
+from provenzero.resources import checklists
+
 _FORMATTER = Formatter()
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Wording:
-    """Templates and lists by dotted key. A key or fact that is missing is a fault of ours and raises KeyError."""
+    """Templates, lists and rows of texts, by dotted key.
+
+    A key or a fact that is missing is a fault of ours and raises KeyError.
+    """
 
     language: str
     texts: Mapping[str, str]
@@ -38,12 +44,12 @@ class Wording:
 
     def branch(self, key: str) -> dict[str, str]:
         """All texts directly under a key, by their last word."""
-        start = f"{key}."
-        return {k[len(start) :]: v for k, v in self.texts.items() if k.startswith(start) and "." not in k[len(start) :]}
+        split = {k.rpartition("."): v for k, v in self.texts.items()}
+        return {last: words for (start, _, last), words in split.items() if start == key}
 
 
 def wording(data: Mapping[str, object]) -> Wording:
-    """Build a wording from the data of its file; ValueError where a value is neither text, list nor mapping."""
+    """A wording from the data of its file; ValueError where a value is neither text, list nor mapping."""
     texts: dict[str, str] = {}
     lists: dict[str, tuple[str, ...]] = {}
     rows: dict[str, tuple[tuple[str, ...], ...]] = {}
@@ -64,6 +70,15 @@ def wording(data: Mapping[str, object]) -> Wording:
             case _:
                 raise ValueError(f"wording: {key} is neither text nor list")
     return Wording(language=texts["language"], texts=texts, lists=lists, rows=rows)
+
+
+def load_wording(language: str = "en") -> Wording:
+    """The wording of a language that ships with the program; ValueError if its file is not sound."""
+    name = f"{language}.yaml"
+    read = load_text(checklists().joinpath("wording", name).read_text(encoding="utf-8"), name)
+    if not isinstance(read, Document):
+        raise ValueError("; ".join(str(finding) for finding in read))
+    return wording(read.data)
 
 
 def facts_of(template: str) -> frozenset[str]:

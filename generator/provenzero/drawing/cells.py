@@ -56,7 +56,10 @@ _NARROWEST = 5.8
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Cell:
-    """A piece of a row about a point on its line. `body`: where the line stops, None for what only stands on it."""
+    """A piece of a row about a point on its line.
+
+    `body`: where the line stops, None for what only stands on it. `clear`: up to where, from the left, nothing is near the line.
+    """
 
     left: float
     right: float
@@ -65,6 +68,7 @@ class Cell:
     line_in: LineId
     line_out: LineId
     body: tuple[float, float] | None
+    clear: float
     paint: Callable[[Canvas, float, float], None]
 
 
@@ -113,7 +117,8 @@ def device_cell(  # noqa: PLR0913 - a device is its tag, its symbol and its two 
         left=max(left, right if where is not None else 0.0), right=right,
         up=beyond - body.top if tags_above else corner - body.top,
         down=corner + body.bottom if tags_above else body.bottom + beyond,
-        line_in=line_in, line_out=line_out, body=(symbol.body.left, symbol.body.right), paint=paint,
+        line_in=line_in, line_out=line_out, body=(symbol.body.left, symbol.body.right),
+        clear=body.left if lock is None else -left, paint=paint,
     )
 
 
@@ -177,7 +182,7 @@ def _standing_cell(
 ) -> Cell:
     return Cell(
         left=left, right=right, up=1.0 if below else reach, down=reach if below else 1.0, line_in=line, line_out=line,
-        body=None, paint=paint,
+        body=None, clear=0.0, paint=paint,
     )
 
 

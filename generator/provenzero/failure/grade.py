@@ -1,12 +1,12 @@
-"""How well a set of locks keeps each source from the zone: barriers in series, a bleed behind them, one leak at a time."""
+"""How well a set of locks keeps each source from the zone: barriers in series, and what one leak would do."""
 
 from collections import deque
 from collections.abc import Mapping
 from dataclasses import dataclass
 from enum import StrEnum
 
-from provenzero.network.model import DeviceKind, DeviceTag, LineId, Source, SourceKind
 from provenzero.failure.single import bears
+from provenzero.network.model import DeviceKind, DeviceTag, LineId, Source, SourceKind
 from provenzero.state.model import State, Wiring
 from provenzero.state.must import vented
 
@@ -36,23 +36,33 @@ def grades(
     wiring: Wiring, start: State, state: State, zone: frozenset[LineId], locks: Mapping[DeviceTag, str]
 ) -> tuple[Grade, ...]:
     """The grade against each source that could have reached the zone before the locks, in the order of the network."""
-    held = vented(wiring, locks)
+    case = _Case(wiring=wiring, state=state, zone=zone, locks=locks, held=vented(wiring, locks))
     found = []
     for source in wiring.network.sources:
-        if source.line in zone and source.kind is SourceKind.STORED and start.high(source.line) > 0.0:
-            found.append(_drained(wiring, source, held))
-            continue
-        if source.kind is SourceKind.STORED and start.high(source.line) <= 0.0:
+        stored = source.kind is SourceKind.STORED
+        if stored and start.high(source.line) <= 0.0:
             continue
         barriers = series(wiring, source, zone, locks)
-        if barriers is None:
-            continue
-        emptied = source.kind is SourceKind.STORED and state.high(source.line) <= 0.0
-        found.append(_drained(wiring, source, held) if emptied else _graded(wiring, state, source, zone, locks, barriers))
+        if stored and (source.line in zone or (barriers and state.high(source.line) <= 0.0)):
+            found.append(_drained(case, source))
+        elif barriers:
+            found.append(_graded(case, source, barriers))
     return tuple(found)
 
 
-def _drained(wiring: Wiring, source: Source, held: Mapping[LineId, DeviceTag | None]) -> Grade:
+@dataclass(frozen=True, slots=True, kw_only=True)
+class _Case:
+    """One set of locks in one state, with the lines it holds open to a vent."""
+
+    wiring: Wiring
+    state: State
+    zone: frozenset[LineId]
+    locks: Mapping[DeviceTag, str]
+    held: Mapping[LineId, DeviceTag | None]
+
+
+def _drained(case: _Case, source: Source) -> Grade:
+    wiring, held = case.wiring, case.held
     way: list[DeviceTag] = []
     line = source.line
     while (tag := held.get(line)) is not None:
@@ -62,22 +72,17 @@ def _drained(wiring: Wiring, source: Source, held: Mapping[LineId, DeviceTag | N
             break
     movable = tuple(t for t in way if wiring.device(t).movable)
     return Grade(
-        source=source.id, barriers=movable, grade=IsolationGrade.DRAINED, survives_single_leak=source.line in held
+        source=source.id,
+        barriers=movable,
+        grade=IsolationGrade.DRAINED,
+        survives_single_leak=source.line in held,
     )
 
 
-def _graded(  # noqa: PLR0913 - a grade is of one source against one set of locks in one state
-    wiring: Wiring,
-    state: State,
-    source: Source,
-    zone: frozenset[LineId],
-    locks: Mapping[DeviceTag, str],
-    barriers: tuple[DeviceTag, ...],
-) -> Grade:
-    held = vented(wiring, locks)
-    survives = all(bears(wiring, state, zone, locks, tag) for tag in barriers)
-    bleed = survives and any(line in held for line in wiring.anywhere[barriers[-1]])
-    at_origin = source.kind is SourceKind.LIVE and wiring.device(barriers[0]).kind in {
+def _graded(case: _Case, source: Source, barriers: tuple[DeviceTag, ...]) -> Grade:
+    survives = all(bears(case.wiring, case.state, case.zone, case.locks, tag) for tag in barriers)
+    bleed = survives and any(line in case.held for line in case.wiring.anywhere[barriers[-1]])
+    at_origin = source.kind is SourceKind.LIVE and case.wiring.device(barriers[0]).kind in {
         DeviceKind.ISOLATOR,
         DeviceKind.AIR_VALVE,
     }
@@ -117,10 +122,10 @@ def series(
             onward += [(0, there, None) for there in free.get(here, ())]
             if position is not None:
                 onward += [(1, there, tag) for there in wiring.anywhere[tag].get(here, ())]
-        for extra, there, tag in onward:
+        for extra, there, through in onward:
             if there in wiring.vents or (there in came and came[there][0] <= cost + extra):
                 continue
-            came[there] = (cost + extra, here, tag)
+            came[there] = (cost + extra, here, through)
             if extra:
                 queue.append(there)
             else:
@@ -128,14 +133,12 @@ def series(
     return None
 
 
-def _crossed(
-    came: Mapping[LineId, tuple[int, LineId | None, DeviceTag | None]], end: LineId
-) -> tuple[DeviceTag, ...]:
+def _crossed(came: Mapping[LineId, tuple[int, LineId | None, DeviceTag | None]], end: LineId) -> tuple[DeviceTag, ...]:
     crossed: list[DeviceTag] = []
     here: LineId | None = end
     while here is not None:
-        _, before, tag = came[here]
-        if tag is not None:
-            crossed.append(tag)
+        _, before, passed = came[here]
+        if passed is not None:
+            crossed.append(passed)
         here = before
     return tuple(dict.fromkeys(reversed(crossed)))

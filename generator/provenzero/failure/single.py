@@ -9,7 +9,11 @@ from provenzero.state.must import vented
 
 
 def exposed(
-    wiring: Wiring, state: State, zone: frozenset[LineId], locks: Mapping[DeviceTag, str], barriers: Iterable[DeviceTag]
+    wiring: Wiring,
+    state: State,
+    zone: frozenset[LineId],
+    locks: Mapping[DeviceTag, str],
+    barriers: Iterable[DeviceTag],
 ) -> dict[DeviceTag, frozenset[LineId]]:
     """For each barrier that could pass: the zone lines it would reach. Lines held open to a vent take the leak.
 

@@ -86,8 +86,15 @@ class Builder:
             )
         )
 
-    def valve(self, valve: Valve, kind: DeviceKind, name: str, *, opened: tuple[Passage, ...],
-              closed: tuple[Passage, ...] = ()) -> None:
+    def valve(
+        self,
+        valve: Valve,
+        kind: DeviceKind,
+        name: str,
+        *,
+        opened: tuple[Passage, ...],
+        closed: tuple[Passage, ...] = (),
+    ) -> None:
         """Add a two-position valve moved by hand."""
         self.device(
             Device(

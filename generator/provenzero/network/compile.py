@@ -93,16 +93,19 @@ def _tank(builder: Builder, unit: Unit, density_kg_m3: float) -> None:
     builder.fixed(f"{tank.tag}-breather", DeviceKind.PIPING, "breather", tank.location, way(reservoir, atmosphere))
     if unit.common_returns:
         returns = builder.line(RETURNS, "common return header")
-        builder.fixed(
-            f"{tank.tag}-returns", DeviceKind.PIPING, "return header", tank.location, way(returns, reservoir)
-        )
+        builder.fixed(f"{tank.tag}-returns", DeviceKind.PIPING, "return header", tank.location, way(returns, reservoir))
     head_m = GREATEST_SUCTION_HEAD_M if tank.suction_head_m is None else tank.suction_head_m
     head = density_kg_m3 * GRAVITY_M_S2 * head_m
     liquid = builder.line(LIQUID, f"fluid in reservoir {tank.tag}", static_head_pag=head)
     builder.sources.append(
         Source(
-            id="reservoir.liquid", name="fluid standing in the reservoir", line=liquid, kind=SourceKind.STORED,
-            low_pag=0.0, pressure_pag=head, gas=True,
+            id="reservoir.liquid",
+            name="fluid standing in the reservoir",
+            line=liquid,
+            kind=SourceKind.STORED,
+            low_pag=0.0,
+            pressure_pag=head,
+            gas=True,
         )
     )
     builder.charged_pag[liquid] = (0.0, head)

@@ -149,7 +149,9 @@ def isolate(wiring: Wiring, state: State, zone: frozenset[LineId], region: Regio
     moves = _moves(wiring, region, holding)
     made, reached, pending = perform(wiring, state, moves)
     obstacles = [*region.obstacles]
-    obstacles += [Obstacle(line=_line_of(wiring, m.device, region), words="not_quiet", path=(m.device,)) for m in pending]
+    obstacles += [
+        Obstacle(line=_line_of(wiring, m.device, region), words="not_quiet", path=(m.device,)) for m in pending
+    ]
     rest, reached, trapped = let_out_rest(
         wiring, reached, region, {**holding.locked, **{m.device: m.position for m in moves}}
     )
@@ -180,9 +182,7 @@ def _targets(wiring: Wiring, state: State, zone: frozenset[LineId], region: Regi
     Where a barrier could leak into the region, emptied gas-loaded lines (they can rebuild some pressure), and pilots
     that must stay dead.
     """
-    emptied = {
-        s.line for s in wiring.network.sources if s.gas and s.line in region.dead and state.high(s.line) > 0.0
-    }
+    emptied = {s.line for s in wiring.network.sources if s.gas and s.line in region.dead and state.high(s.line) > 0.0}
     pilots = {line for tag in region.barriers for line in unheld_movers(wiring.device(tag))}
     edge = {line for tag in region.barriers for line in wiring.anywhere[tag] if line in region.dead}
     lines = wiring.network.lines
@@ -202,7 +202,9 @@ def _weak(
     """Zone lines that one leaking barrier would put under pressure, because no locked vent takes the leak."""
     released = replace(state, pressures={k: (0.0, 0.0) if k in region.dead else v for k, v in state.pressures.items()})
     found = exposed(wiring, released, zone, locks, [t for t in region.barriers if t in locks])
-    return {line for lines in found.values() for line in lines if wiring.network.lines[line].medium is not Medium.ELECTRIC}
+    return {
+        line for lines in found.values() for line in lines if wiring.network.lines[line].medium is not Medium.ELECTRIC
+    }
 
 
 def _moves(wiring: Wiring, region: Region, holding: Holding) -> list[Move]:
@@ -228,9 +230,7 @@ def _line_of(wiring: Wiring, device: DeviceTag, region: Region) -> LineId:
     return next((line for line in lines if line in region.dead), next(iter(lines)))
 
 
-def _reached(
-    wiring: Wiring, locks: Mapping[DeviceTag, str], state: State, zone: frozenset[LineId]
-) -> list[Obstacle]:
+def _reached(wiring: Wiring, locks: Mapping[DeviceTag, str], state: State, zone: frozenset[LineId]) -> list[Obstacle]:
     flood = reach(wiring, locks, state.pressures)
     return [
         Obstacle(line=line, words="reached", path=flood.path(line))

@@ -1,4 +1,4 @@
-"""How the lines of the dead region are let out to a vent, through devices that a lock can hold open if there are any."""
+"""How the lines of the dead region are let out to a vent, if possible through devices that a lock can hold open."""
 
 import heapq
 from collections.abc import Iterable, Mapping, Sequence
@@ -102,7 +102,7 @@ def _choose(  # noqa: PLR0913 - the choice and what it may not touch
     return holding
 
 
-def way_out(
+def way_out(  # noqa: PLR0913 - a search, its start and what it may not touch
     wiring: Wiring,
     state: State,
     shut: frozenset[LineId],
@@ -113,8 +113,8 @@ def way_out(
 ) -> list[Leg] | None:
     """The cheapest way from a line to a vent through sure open passages; None if there is none.
 
-    `shut` lines are not entered; `fixed` devices stand where they are put. `through_checks`: a check that opens outward may be used too (for a line
-    that nobody opens: it follows the line outside it down).
+    `shut` lines are not entered; `fixed` devices stand where they are put. `through_checks`: a check that opens
+    outward may be used too (for a line that nobody opens: it follows the line outside it down).
     """
     queue: list[tuple[float, int, LineId]] = [(0.0, 0, start)]
     order = 0

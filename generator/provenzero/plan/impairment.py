@@ -77,16 +77,12 @@ def _cut(wiring: Wiring, line: LineId, dead: frozenset[LineId], locks: Mapping[D
     return True
 
 
-def impairment(
-    wiring: Wiring, unit: Unit, dead: frozenset[LineId], locks: Mapping[DeviceTag, str]
-) -> Impairment:
+def impairment(wiring: Wiring, unit: Unit, dead: frozenset[LineId], locks: Mapping[DeviceTag, str]) -> Impairment:
     """The impairment of a finished isolation, in the words and order of the description."""
     lost = loss(wiring, dead, locks)
     stores = set(lost.stores)
     banks = [
-        b.tag
-        for b in unit.banks
-        if b.tag in stores or any(f"{b.tag}/{n}" in stores for n in range(1, b.bottles + 1))
+        b.tag for b in unit.banks if b.tag in stores or any(f"{b.tag}/{n}" in stores for n in range(1, b.bottles + 1))
     ]
     port = {(p.equipment, p.name): p.line for p in wiring.network.ports}
     panels = []
@@ -95,9 +91,7 @@ def impairment(
         air = port.get((panel.tag, "air"))
         if energy in dead or air in dead:
             panels.append(panel.tag)
-    left = dict.fromkeys(
-        "rig air" if p.drive is Drive.AIR else p.supply for p in unit.pumps if p.tag not in lost.pumps
-    )
+    left = dict.fromkeys("rig air" if p.drive is Drive.AIR else p.supply for p in unit.pumps if p.tag not in lost.pumps)
     return Impairment(
         functions_lost=lost.functions,
         remote_lost=lost.remote,

@@ -63,7 +63,9 @@ def make_plan(
         return Refusal(unit=unit, job=job, on=on, zone=zone, obstacles=attempt.obstacles)
     making = _Making(unit=unit, job=job, on=on, wiring=wiring, zone=zone, attempt=attempt, script=script)
     script.say(
-        Section.PREPARE, StepKind.READ_BEFORE, expect=readings(wiring, script.state, attempt.region.dead),
+        Section.PREPARE,
+        StepKind.READ_BEFORE,
+        expect=readings(wiring, script.state, attempt.region.dead),
         reason="read_before",
     )
     purposes = _isolate(making)
@@ -149,14 +151,20 @@ def _verify(making: _Making) -> None:
         shown = gauges_of(wiring, script.state, group[0])
         if shown:
             script.say(
-                Section.VERIFY, StepKind.READ_ZERO, lines=group,
-                expect=readings(wiring, script.state, [g.reads for g in shown]), reason="zero_read",
+                Section.VERIFY,
+                StepKind.READ_ZERO,
+                lines=group,
+                expect=readings(wiring, script.state, [g.reads for g in shown]),
+                reason="zero_read",
             )
         if len(shown) < _INDICATIONS:
             unseen.setdefault(len(shown), []).extend(group)
     for count, lines in unseen.items():
         script.say(
-            Section.VERIFY, StepKind.TEST_GAUGE, lines=tuple(lines), facts={"gauges": str(count)},
+            Section.VERIFY,
+            StepKind.TEST_GAUGE,
+            lines=tuple(lines),
+            facts={"gauges": str(count)},
             reason="second_indication",
         )
     script.say(Section.VERIFY, StepKind.WATCH, lines=making.zone, hold_point=True, reason="hold")
@@ -166,9 +174,7 @@ def _verify(making: _Making) -> None:
 def _groups(making: _Making) -> list[tuple[LineId, ...]]:
     """Zone lines that hold pressure media, those that share one pressure together."""
     wiring, state = making.wiring, making.script.state
-    left = [
-        k for k in making.zone if wiring.network.lines[k].medium is not Medium.ELECTRIC and k not in wiring.vents
-    ]
+    left = [k for k in making.zone if wiring.network.lines[k].medium is not Medium.ELECTRIC and k not in wiring.vents]
     groups = []
     while left:
         same = joined_lines(wiring, state, left[0])
@@ -201,7 +207,9 @@ def _reinstate(making: _Making, start: State, purposes: Mapping[DeviceTag, Purpo
     stuck = restore_all(script, start, purposes, making.zone, emptied)
     if not stuck:
         script.say(
-            Section.REINSTATE, StepKind.READ_RESTORED, expect=readings(wiring, script.state, making.attempt.region.dead),
+            Section.REINSTATE,
+            StepKind.READ_RESTORED,
+            expect=readings(wiring, script.state, making.attempt.region.dead),
             reason="read_restored",
         )
     return stuck
@@ -228,7 +236,11 @@ def _tests(making: _Making, start: State) -> None:
             continue
         lines = tuple(k for k in making.zone if script.state.high(k) > 0.0)
         script.say(
-            Section.TEST, plain[kind], lines=making.zone, facts={"on": making.on}, reason="test",
+            Section.TEST,
+            plain[kind],
+            lines=making.zone,
+            facts={"on": making.on},
+            reason="test",
             expect=readings(making.wiring, script.state, lines),
         )
     script.say(Section.TEST, StepKind.HAND_BACK, hold_point=True, reason="hand_back")
@@ -244,7 +256,6 @@ def _function_test(script: Script, item: Actuator, start: State) -> None:
 
 def _locks(making: _Making, isolated: State, purposes: Mapping[DeviceTag, Purpose]) -> tuple[Lock, ...]:
     wiring, attempt = making.wiring, making.attempt
-    zone = frozenset(making.zone)
     locks = []
     for tag, number in sorted(making.script.numbers.items(), key=lambda item: item[1]):
         fewer = {k: v for k, v in attempt.locks.items() if k != tag}
@@ -261,4 +272,3 @@ def _locks(making: _Making, isolated: State, purposes: Mapping[DeviceTag, Purpos
             )
         )
     return tuple(locks)
-

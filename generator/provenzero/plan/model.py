@@ -104,7 +104,7 @@ class Step:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Lock:
-    """One lock. `holds_back`: source and way that would reach the zone without it; `keeps_open`: lines it keeps vented."""
+    """One lock. `holds_back`: source and way into the zone without it; `keeps_open`: lines it keeps vented."""
 
     number: int
     device: DeviceTag

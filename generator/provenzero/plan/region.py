@@ -71,9 +71,7 @@ def _edge(
     return barriers, beyond
 
 
-def _separating(
-    wiring: Wiring, state: State, tag: DeviceTag, dead: set[LineId], far: set[LineId]
-) -> str | None:
+def _separating(wiring: Wiring, state: State, tag: DeviceTag, dead: set[LineId], far: set[LineId]) -> str | None:
     """The position in which a lock on the device keeps the far lines from the dead ones; None if there is none.
 
     A centre is preferred to an end, because an end could move the piston; else the position it stands in.
@@ -86,10 +84,7 @@ def _separating(
         for position in device.positions
         if position != FULL_OPEN
         and not any(
-            there in far
-            for here, ways in wiring.joined[tag, position].items()
-            if here in dead
-            for there in ways
+            there in far for here, ways in wiring.joined[tag, position].items() if here in dead for there in ways
         )
     ]
     if not good:
@@ -131,9 +126,7 @@ def _drives(wiring: Wiring, dead: set[LineId]) -> set[LineId]:
 
 def _pilots(wiring: Wiring, barriers: Mapping[DeviceTag, str], outside: Reach) -> set[LineId]:
     """Pilot or supply lines that could move a barrier although it is locked."""
-    return {
-        line for tag in barriers for line in unheld_movers(wiring.device(tag)) if line in outside.lines
-    }
+    return {line for tag in barriers for line in unheld_movers(wiring.device(tag)) if line in outside.lines}
 
 
 def _live_inside(wiring: Wiring, dead: set[LineId]) -> tuple[Obstacle, ...]:

@@ -11,6 +11,9 @@ from provenzero.state.action import Effect, act
 from provenzero.state.model import State, Wiring
 
 _ENERGY = 6
+_BY_PURPOSE = {Purpose.ENERGY: _ENERGY, Purpose.REMOTE: 7}
+_BY_KIND = {DeviceKind.GAS_VALVE: 0, DeviceKind.FOUR_WAY_VALVE: 4, DeviceKind.REGULATOR: 8}
+_VENT, _INNER, _BARRIER = 1, 2, 5
 
 
 def restore_all(
@@ -26,9 +29,7 @@ def restore_all(
     """
     wiring = script.wiring
     pending = [
-        tag
-        for tag in wiring.network.devices
-        if tag in script.on or script.state.positions[tag] != start.positions[tag]
+        tag for tag in wiring.network.devices if tag in script.on or script.state.positions[tag] != start.positions[tag]
     ]
     turns = {tag: _turn(wiring, tag, script.state.positions[tag], purposes) for tag in pending}
     while pending:
@@ -77,24 +78,16 @@ def _turn(wiring: Wiring, tag: DeviceTag, position: str, purposes: Mapping[Devic
         there in wiring.vents for here in wiring.joined[tag, position] for there in wiring.joined[tag, position][here]
     )
     purpose = purposes.get(tag, Purpose.VENT)
-    if purpose is Purpose.REMOTE:
-        return 7
-    if purpose is Purpose.ENERGY:
-        return _ENERGY
-    if device.kind is DeviceKind.REGULATOR:
-        return 8
-    if device.kind is DeviceKind.GAS_VALVE:
-        return 0
-    if device.kind is DeviceKind.FOUR_WAY_VALVE:
-        return 4
+    if purpose in _BY_PURPOSE:
+        return _BY_PURPOSE[purpose]
+    if device.kind in _BY_KIND:
+        return _BY_KIND[device.kind]
     if opened_to_vent:
-        return 1
-    return 2 if purpose is Purpose.VENT else 5
+        return _VENT
+    return _INNER if purpose is Purpose.VENT else _BARRIER
 
 
-def _next(
-    script: Script, pending: list[DeviceTag], turns: Mapping[DeviceTag, int], start: State
-) -> DeviceTag | None:
+def _next(script: Script, pending: list[DeviceTag], turns: Mapping[DeviceTag, int], start: State) -> DeviceTag | None:
     """The device whose turn it is: in each turn first what makes nothing happen, then what a step can announce."""
     wiring = script.wiring
     for turn in sorted({turns[tag] for tag in pending}):

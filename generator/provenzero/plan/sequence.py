@@ -129,7 +129,5 @@ def remaining(wiring: Wiring, state: State, dead: frozenset[LineId]) -> list[Lin
     return [
         line
         for line in wiring.network.lines
-        if line in dead
-        and line not in wiring.vents
-        and state.high(line) > wiring.network.lines[line].static_head_pag
+        if line in dead and line not in wiring.vents and state.high(line) > wiring.network.lines[line].static_head_pag
     ]

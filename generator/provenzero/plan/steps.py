@@ -125,8 +125,14 @@ class Script:
         """Add a step that gives a gas line its charge again."""
         after = refill(self.wiring, self.state, line)
         step = Step(
-            id=self._next(section), section=section, kind=StepKind.RECHARGE, recharges=line, facts=facts,
-            lines=(line,), hold_point=True, reason="recharge",
+            id=self._next(section),
+            section=section,
+            kind=StepKind.RECHARGE,
+            recharges=line,
+            facts=facts,
+            lines=(line,),
+            hold_point=True,
+            reason="recharge",
         )
         self._add(step, after)
 

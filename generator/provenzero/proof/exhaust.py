@@ -11,9 +11,7 @@ from collections.abc import Iterable, Mapping
 from provenzero.network.model import Device, DeviceTag, LineId, Network, SourceKind
 
 
-def ever_pressurised(
-    network: Network, locks: Mapping[DeviceTag, str], holding: Iterable[LineId]
-) -> frozenset[LineId]:
+def ever_pressurised(network: Network, locks: Mapping[DeviceTag, str], holding: Iterable[LineId]) -> frozenset[LineId]:
     """Lines that could come under pressure, given the locks and the lines that hold pressure now."""
     wet = {line for line in holding if not network.lines[line].vent}
     while True:

@@ -23,4 +23,7 @@ def least(plan: Plan, run: Replay) -> Verdict:
             idle.append(tag)
     if idle:
         return Verdict(holds=False, evidence=f"locks that nothing depends on: {', '.join(idle)}")
-    return Verdict(holds=True, evidence=f"each of the {len(locks)} locks was left out once; each time a protection was gone")
+    return Verdict(
+        holds=True,
+        evidence=f"each of the {len(locks)} locks was left out once; each time a protection was gone",
+    )

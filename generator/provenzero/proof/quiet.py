@@ -11,7 +11,8 @@ def quiet(plan: Plan, run: Replay) -> Verdict:
         return Verdict(holds=False, evidence="; ".join(loud))
     announced = sum(m.step.moves_function is not None or m.step.starts_pump is not None for m in run.moments)
     return Verdict(
-        holds=True, evidence=f"{len(plan.steps)} steps simulated; {announced} of them announce a movement or a start"
+        holds=True,
+        evidence=f"{len(plan.steps)} steps simulated; {announced} of them announce a movement or a start",
     )
 
 

@@ -79,11 +79,14 @@ def act(wiring: Wiring, state: State, device: DeviceTag, position: str) -> Effec
     settled = settle(wiring, positions, state.pressures)
     pistons = dict(state.pistons)
     moved = []
-    for item in wiring.network.actuators:
-        for end, line, other in (("open", item.open_line, item.close_line), ("close", item.close_line, item.open_line)):
-            if _pushes(settled, line) and not _pushes(settled, other) and pistons[item.name] != end:
-                pistons[item.name] = end
-                moved.append(item.name)
+    for actuator in wiring.network.actuators:
+        for end, line, other in (
+            ("open", actuator.open_line, actuator.close_line),
+            ("close", actuator.close_line, actuator.open_line),
+        ):
+            if _pushes(settled, line) and not _pushes(settled, other) and pistons[actuator.name] != end:
+                pistons[actuator.name] = end
+                moved.append(actuator.name)
     new, old = settled.pressures, state.pressures
     return Effect(
         after=_state(settled, positions, pistons),

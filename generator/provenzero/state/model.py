@@ -65,6 +65,4 @@ def wire(network: Network) -> Wiring:
         anywhere[tag] = {k: tuple(dict.fromkeys(v)) for k, v in every.items()}
         for line in every:
             touching[line].append(tag)
-    return Wiring(
-        network, {k: tuple(v) for k, v in touching.items()}, joined, anywhere, network.vents()
-    )
+    return Wiring(network, {k: tuple(v) for k, v in touching.items()}, joined, anywhere, network.vents())

@@ -69,9 +69,7 @@ def _on_loss(
     return standing
 
 
-def _settle(
-    wiring: Wiring, positions: Mapping[DeviceTag, str], before: Mapping[LineId, Interval]
-) -> Settled:
+def _settle(wiring: Wiring, positions: Mapping[DeviceTag, str], before: Mapping[LineId, Interval]) -> Settled:
     group_of, edges = _groups(wiring, positions)
     groups = _begin(wiring, group_of, before)
     live: set[str] = set()
@@ -87,15 +85,13 @@ def _settle(
                     changed = True
         if changed or not _:
             _drain(groups, edges)
-        changed |= any([_pass_on(groups, edge) for edge in edges])
+        changed |= sum(_pass_on(groups, edge) for edge in edges) > 0
         if not changed:
             break
     pressures = {line: (groups[g].low, groups[g].high) for line, g in group_of.items()}
     fed = frozenset(line for line, g in group_of.items() if groups[g].stiff and not groups[g].vent)
     vented = tuple(s.id for s in sources if s.id in live and _reaches_vent(groups, edges, group_of[s.line]))
-    return Settled(
-        pressures=pressures, fed=fed, live_vented=vented, live_drives=frozenset(live), positions=positions
-    )
+    return Settled(pressures=pressures, fed=fed, live_vented=vented, live_drives=frozenset(live), positions=positions)
 
 
 def _groups(wiring: Wiring, positions: Mapping[DeviceTag, str]) -> tuple[dict[LineId, int], list[_Edge]]:
@@ -135,9 +131,7 @@ def _limit(kind: PassageKind, set_pag: float | None) -> float:
     return float("inf")
 
 
-def _begin(
-    wiring: Wiring, group_of: Mapping[LineId, int], before: Mapping[LineId, Interval]
-) -> list[_Group]:
+def _begin(wiring: Wiring, group_of: Mapping[LineId, int], before: Mapping[LineId, Interval]) -> list[_Group]:
     count = max(group_of.values()) + 1
     members: list[list[LineId]] = [[] for _ in range(count)]
     for line, number in group_of.items():
@@ -176,7 +170,12 @@ def _drain(groups: list[_Group], edges: list[_Edge]) -> None:
         for edge in edges:
             up, down = groups[edge.source], groups[edge.target]
             open_ended = (down.vent or down.drained) and not down.live
-            if edge.kind is PassageKind.CHECK and edge.certain and open_ended and not (up.vent or up.live or up.drained):
+            if (
+                edge.kind is PassageKind.CHECK
+                and edge.certain
+                and open_ended
+                and not (up.vent or up.live or up.drained)
+            ):
                 up.low, up.high, up.drained, up.stiff = 0.0, 0.0, True, False
                 changed = True
 

@@ -16,7 +16,9 @@ def bank(builder: Builder, item: Bank, charge_pag: tuple[float, float], rated_pa
     if item.isolation is not None:
         fluid = builder.line(f"{item.tag}.fluid", f"fluid side of bank {item.tag}")
         builder.valve(
-            item.isolation, DeviceKind.BANK_ISOLATION_VALVE, f"isolation valve of bank {item.tag}",
+            item.isolation,
+            DeviceKind.BANK_ISOLATION_VALVE,
+            f"isolation valve of bank {item.tag}",
             opened=(way(main, fluid),),
         )
     if item.bleed is not None:
@@ -51,9 +53,7 @@ def _source(builder: Builder, key: str, words: str, line: LineId, charge_pag: tu
 
 def _gas(builder: Builder, item: Bank, number: int, high_pag: float, rated_pag: float) -> None:
     bottle = f"{item.tag}/{number}"
-    gas = builder.line(
-        f"{bottle}.gas", f"nitrogen of bottle {bottle}", Medium.NITROGEN, volume_m3=item.gas_volume_m3
-    )
+    gas = builder.line(f"{bottle}.gas", f"nitrogen of bottle {bottle}", Medium.NITROGEN, volume_m3=item.gas_volume_m3)
     low = item.precharge_pag or 0.0
     high = max(low if item.precharge_pag is not None else rated_pag, high_pag)
     builder.charged_pag[gas] = (low, high)

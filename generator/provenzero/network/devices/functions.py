@@ -26,8 +26,10 @@ def chambers(builder: Builder, item: Function, density_kg_m3: float) -> None:
     line_m3 = 0.0 if bore is None or length is None else QUARTER_PI * bore**2 * length
     for side, volume in (("open", item.open_volume_m3), ("close", item.close_volume_m3)):
         builder.line(
-            f"{item.name}.{side}", f"{item.label}, {'opening' if side == 'open' else 'closing'} line",
-            volume_m3=line_m3 + (volume or 0.0), static_head_pag=head,
+            f"{item.name}.{side}",
+            f"{item.label}, {'opening' if side == 'open' else 'closing'} line",
+            volume_m3=line_m3 + (volume or 0.0),
+            static_head_pag=head,
         )
 
 
@@ -40,13 +42,21 @@ def function(builder: Builder, item: Function, panels: tuple[Panel, ...], *, com
     if any(type(e).__name__ in {"Valve", "CheckValve", "Strainer", "Reducer"} for e in valve.supply):
         supply = builder.line(f"{item.name}.supply", f"{item.label}, supply of the four-way valve")
     run(
-        builder, valve.supply, start=feed, end=supply, prefix=f"{item.name}.supply", words=f"supply of {valve.tag}"
+        builder,
+        valve.supply,
+        start=feed,
+        end=supply,
+        prefix=f"{item.name}.supply",
+        words=f"supply of {valve.tag}",
     )
     tank = LineId(RETURNS)
     if not common_returns:
         tank = builder.line(f"{item.name}.return", f"{item.label}, return of the four-way valve")
         builder.fixed(
-            f"{valve.tag}-return", DeviceKind.PIPING, f"return line of {valve.tag}", valve.location,
+            f"{valve.tag}-return",
+            DeviceKind.PIPING,
+            f"return line of {valve.tag}",
+            valve.location,
             way(tank, LineId(RESERVOIR)),
         )
     for element in item.open_fittings:
@@ -54,7 +64,7 @@ def function(builder: Builder, item: Function, panels: tuple[Panel, ...], *, com
     for element in item.close_fittings:
         fitting(builder, element, close_line)
     pilots = movers(builder, item.name, valve, panels)
-    holds = (() if not valve.lockable else pilots if valve.lock_holds_against_pilot else (HAND,))
+    holds = () if not valve.lockable else pilots if valve.lock_holds_against_pilot else (HAND,)
     builder.device(
         Device(
             tag=DeviceTag(valve.tag),
@@ -74,7 +84,11 @@ def function(builder: Builder, item: Function, panels: tuple[Panel, ...], *, com
     )
     builder.actuators.append(
         Actuator(
-            name=item.name, label=item.label, open_line=open_line, close_line=close_line, valve=DeviceTag(valve.tag)
+            name=item.name,
+            label=item.label,
+            open_line=open_line,
+            close_line=close_line,
+            valve=DeviceTag(valve.tag),
         )
     )
     ports = (("open_line", open_line), ("close_line", close_line), ("supply", supply), ("return", tank))

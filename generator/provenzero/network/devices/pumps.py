@@ -19,7 +19,12 @@ def pump(builder: Builder, item: Pump) -> None:
     if any(not _tee(e) for e in item.suction):
         suction = builder.line(f"{item.tag}.suction", f"suction of pump {item.tag}")
     met = run(
-        builder, item.suction, start=LIQUID, end=suction, prefix=f"{item.tag}.suction", words=f"suction of {item.tag}"
+        builder,
+        item.suction,
+        start=LIQUID,
+        end=suction,
+        prefix=f"{item.tag}.suction",
+        words=f"suction of {item.tag}",
     )
     head = builder.lines[LIQUID].static_head_pag
     builder.lines.update({k: replace(builder.lines[k], static_head_pag=head) for k in met})
@@ -29,7 +34,11 @@ def pump(builder: Builder, item: Pump) -> None:
     if any(not _tee(e) for e in elements):
         outlet = builder.line(f"{item.tag}.outlet", f"outlet of pump {item.tag}")
     run(
-        builder, elements, start=outlet, end=delivery, prefix=f"{item.tag}.discharge",
+        builder,
+        elements,
+        start=outlet,
+        end=delivery,
+        prefix=f"{item.tag}.discharge",
         words=f"discharge of {item.tag}",
     )
     if own_check is not None:
@@ -63,7 +72,10 @@ def _low_pag(item: Pump) -> float:
 
 
 def _tee(element: Element) -> bool:
-    return not isinstance(element, (Valve, CheckValve)) and type(element).__name__ not in {"Strainer", "Reducer"}
+    return not isinstance(element, (Valve, CheckValve)) and type(element).__name__ not in {
+        "Strainer",
+        "Reducer",
+    }
 
 
 def _without_own_check(elements: tuple[Element, ...]) -> tuple[tuple[Element, ...], CheckValve | None]:
@@ -80,7 +92,14 @@ def _drive(builder: Builder, item: Pump) -> LineId | None:
         if not isinstance(item.energy, Valve):
             return air
         drive = builder.line(f"{item.tag}.drive", f"air to pump {item.tag}", Medium.AIR)
-        run(builder, (item.energy,), start=air, end=drive, prefix=f"{item.tag}.air", words=f"air to {item.tag}")
+        run(
+            builder,
+            (item.energy,),
+            start=air,
+            end=drive,
+            prefix=f"{item.tag}.air",
+            words=f"air to {item.tag}",
+        )
         return drive
     supply = electric_supply(builder, f"hand.{item.tag}" if item.drive is Drive.HAND else item.supply)
     if not isinstance(item.energy, Isolator):

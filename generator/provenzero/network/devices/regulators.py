@@ -65,7 +65,10 @@ def regulator(builder: Builder, item: Regulator, *, common_returns: bool) -> Non
 def _own_return(builder: Builder, item: Regulator) -> LineId:
     tank = builder.line(f"{item.tag}.return", f"return of regulator {item.tag}")
     builder.fixed(
-        f"{item.tag}-return", DeviceKind.PIPING, f"return line of {item.tag}", item.location,
+        f"{item.tag}-return",
+        DeviceKind.PIPING,
+        f"return line of {item.tag}",
+        item.location,
         way(tank, LineId("reservoir")),
     )
     return tank
@@ -93,8 +96,6 @@ def _pilot(
 def bypass(builder: Builder, item: Bypass) -> None:
     """Compile a bypass valve between two pressure lines."""
     start, end = LineId(item.from_line), LineId(item.to_line)
-    builder.valve(
-        item.valve, DeviceKind.BYPASS_VALVE, f"bypass valve, {start} to {end}", opened=(way(start, end),)
-    )
+    builder.valve(item.valve, DeviceKind.BYPASS_VALVE, f"bypass valve, {start} to {end}", opened=(way(start, end),))
     builder.port(item.valve.tag, "inlet", start)
     builder.port(item.valve.tag, "outlet", end)

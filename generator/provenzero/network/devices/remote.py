@@ -32,8 +32,12 @@ def air(builder: Builder, item: AirSupply) -> None:
         builder.fixed("air-piping", DeviceKind.PIPING, "air pipe to the unit", "", way(rig, unit))
     builder.sources.append(
         Source(
-            id="air.supply", name="rig air", line=rig, kind=SourceKind.LIVE,
-            low_pag=item.pressure_pag, pressure_pag=item.pressure_pag,
+            id="air.supply",
+            name="rig air",
+            line=rig,
+            kind=SourceKind.LIVE,
+            low_pag=item.pressure_pag,
+            pressure_pag=item.pressure_pag,
         )
     )
     builder.port("air", "supply", unit)
@@ -46,7 +50,12 @@ def panel(builder: Builder, item: Panel) -> None:
         if isinstance(item.energy, Valve):
             feed = builder.line(f"{item.tag}.air", f"air of panel {item.tag}", Medium.AIR)
             run(
-                builder, (item.energy,), start=AIR, end=feed, prefix=f"{item.tag}.air", words=f"air to panel {item.tag}"
+                builder,
+                (item.energy,),
+                start=AIR,
+                end=feed,
+                prefix=f"{item.tag}.air",
+                words=f"air to panel {item.tag}",
             )
         builder.port(item.tag, "air", feed)
         return
@@ -62,7 +71,11 @@ def panel(builder: Builder, item: Panel) -> None:
         if item.pilot_air is not None:
             pilot_air = builder.line(f"{item.tag}.air", f"pilot air of panel {item.tag}", Medium.AIR)
             run(
-                builder, (item.pilot_air,), start=AIR, end=pilot_air, prefix=f"{item.tag}.air",
+                builder,
+                (item.pilot_air,),
+                start=AIR,
+                end=pilot_air,
+                prefix=f"{item.tag}.air",
                 words=f"pilot air of panel {item.tag}",
             )
         builder.port(item.tag, "air", pilot_air)
@@ -84,14 +97,12 @@ def movers(builder: Builder, function: str, valve: FourWayValve, panels: tuple[P
             continue
         pilots.append(_control(builder, function, item))
     if not pilots or valve.pilot_isolation is None:
-        return tuple([*found, *pilots])
+        return (*found, *pilots)
     return (*found, _isolated(builder, function, valve.pilot_isolation, pilots))
 
 
 def _control(builder: Builder, function: str, item: Panel) -> LineId:
-    pilot = builder.line(
-        f"{function}.pilot.{item.tag}", f"pilot lines of {function} from panel {item.tag}", Medium.AIR
-    )
+    pilot = builder.line(f"{function}.pilot.{item.tag}", f"pilot lines of {function} from panel {item.tag}", Medium.AIR)
     feed = _port(builder, item.tag, "air")
     atmosphere = LineId("atmosphere")
     electric = item.kind is PanelKind.ELECTRIC
@@ -118,8 +129,6 @@ def _isolated(builder: Builder, function: str, valve: Valve, pilots: list[LineId
     own = builder.line(f"{function}.pilot", f"pilot lines of {function} at the valve", Medium.AIR)
     opened = tuple(passage(PassageKind.CHECK, p, own) for p in pilots)
     closed = (way(own, LineId("atmosphere")),) if valve.exhausts else ()
-    builder.valve(
-        valve, DeviceKind.PILOT_VALVE, f"pilot shut-off of {function}", opened=opened, closed=closed
-    )
+    builder.valve(valve, DeviceKind.PILOT_VALVE, f"pilot shut-off of {function}", opened=opened, closed=closed)
     builder.port(function, "pilot", own)
     return own

@@ -47,7 +47,7 @@ def run(  # noqa: PLR0913 - a run is its two ends, its elements and its words
     return tuple(met)
 
 
-def _inline(  # noqa: PLR0913 - as above
+def _inline(  # noqa: PLR0913, PLR0917 - as above
     builder: Builder,
     element: Valve | CheckValve | Strainer | Reducer,
     here: LineId,
@@ -81,7 +81,11 @@ def fitting(builder: Builder, element: Fitting, line: LineId) -> None:
         case Relief():
             lift = passage(PassageKind.RELIEF, line, LineId(element.to), element.set_pressure_pag)
             builder.fixed(
-                element.tag, DeviceKind.RELIEF_VALVE, f"relief valve, {_words(builder, line)}", element.location, lift
+                element.tag,
+                DeviceKind.RELIEF_VALVE,
+                f"relief valve, {_words(builder, line)}",
+                element.location,
+                lift,
             )
             builder.port(element.tag, "inlet", line)
             builder.port(element.tag, "outlet", LineId(element.to))
@@ -104,7 +108,9 @@ def _instrument(builder: Builder, element: Instrument, line: LineId) -> None:
         medium = builder.lines[line].medium
         reads = builder.line(f"{element.tag}.stub", f"stub of {element.tag}", medium)
         builder.valve(
-            element.valve, DeviceKind.GAUGE_VALVE, f"valve of {element.kind.value} {element.tag}",
+            element.valve,
+            DeviceKind.GAUGE_VALVE,
+            f"valve of {element.kind.value} {element.tag}",
             opened=(way(line, reads),),
         )
         readable = element.valve.normal.value == "open"
