@@ -92,6 +92,25 @@ class TestDead:
         next(entry for entry in plan["network"]["lines"] if entry["id"] == "run")["static_head_pag"] = 90e3
         assert dead(plan).holds
 
+    def test_a_locked_valve_falls_on_loss_of_air_unless_its_lock_withstands_that(self) -> None:
+        plan = small_plan()
+        add_line(plan, line("pilot", "air"), [7e5, 8e5])
+        add(plan, valve("AV", "pilot", "tank"), "closed")
+        find(plan, "SV")["on_loss"] = {"line": "pilot", "position": "open"}
+        assert dead(plan).holds
+        plan["steps"].insert(2, step(9, "release", sets="AV open"))
+        assert not dead(plan).holds
+        find(plan, "SV")["lock_holds_against"] = ["hand", "pilot"]
+        assert dead(plan).holds
+
+    def test_an_unlocked_valve_falls_on_loss_of_air_whatever_a_lock_would_withstand(self) -> None:
+        plan = small_plan()
+        add_line(plan, line("pilot", "air"))
+        find(plan, "SV")["on_loss"] = {"line": "pilot", "position": "open"}
+        find(plan, "SV")["lock_holds_against"] = ["hand", "pilot"]
+        plan["steps"][0]["lock"] = None
+        assert not dead(plan).holds
+
     def test_an_electric_line_is_dead_with_its_breaker_off(self) -> None:
         plan = small_plan() | {
             "zone": ["motor"],

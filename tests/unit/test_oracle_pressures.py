@@ -129,6 +129,19 @@ def test_a_vented_line_that_a_live_source_flows_through_drains_nothing_for_sure(
     assert found == {"a": tuple(FULL), "b": (0.0, 10e6), "c": (0.0, 10e6), "d": (0.0, 10e6)}
 
 
+def test_a_line_that_a_live_source_flows_through_is_not_drained_by_its_check_valve() -> None:
+    devices = (fixed("R", way("a regulator b", 10e6)), fixed("C", way("b check tank")))
+    found = circuit_at_rest({"a": FULL, "b": NOTHING}, *devices, sources=(live("pump", "a", FULL),))
+    assert found["b"] == (0.0, 10e6)
+
+
+def test_a_closed_relief_valve_and_a_backed_off_regulator_feed_nothing() -> None:
+    for idle in (way("a relief ret", 22e6), way("a regulator ret", 0.0)):
+        devices = (fixed("V", idle), fixed("P", way("ret open tank")), fixed("C", way("x check ret")))
+        lines = {"a": FULL, "ret": NOTHING, "x": (3e6, 3e6)}
+        assert circuit_at_rest(lines, *devices, sources=(live("pump", "a", FULL),))["x"] == NOTHING
+
+
 def test_bottles_that_flow_out_through_a_chain_keep_nothing_up() -> None:
     devices = (fixed("R", way("a regulator b", 10e6)), fixed("C", way("b regulator tank", 5e6)))
     lines = {"a": FULL, "b": (4e6, 4e6)}

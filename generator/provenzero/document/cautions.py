@@ -3,8 +3,8 @@
 from provenzero.catalogue.job import Equipment
 from provenzero.document.brief import Brief
 from provenzero.document.model import Block, Bullets, Notice, Signal, Words
+from provenzero.document.register import test_gauges
 from provenzero.network.model import LineId, Medium
-from provenzero.plan.model import StepKind
 
 
 def cautions(brief: Brief) -> tuple[Block, ...]:
@@ -32,7 +32,7 @@ def cautions(brief: Brief) -> tuple[Block, ...]:
 def protection(brief: Brief) -> Bullets:
     """What to wear and what to bring, counted from the plan."""
     plan, measure = brief.plan, brief.measure
-    gauges = sum(step.kind is StepKind.TEST_GAUGE for step in plan.steps)
+    gauges = test_gauges(brief)
     points = [brief.say("protection.wear"), brief.say("protection.locks", locks=str(len(plan.locks)))]
     if gauges:
         high = max((plan.start().high(k) for k in plan.zone), default=0.0)

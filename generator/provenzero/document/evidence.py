@@ -1,7 +1,8 @@
-"""For the auditor: properties and their evidence, grades, computed figures, what was assumed, where each demand is met."""
+"""For the auditor: properties and evidence, grades, figures, what was assumed, where each demand is met."""
 
 from provenzero.document.brief import Brief
 from provenzero.document.model import Blank, Block, Column, Table, Text, Words
+from provenzero.failure.grade import Grade, IsolationGrade
 
 
 def assumptions(brief: Brief) -> Block:
@@ -16,8 +17,10 @@ def assumptions(brief: Brief) -> Block:
     )
     rows = tuple(
         (
-            Text(words=gap.path, strong=True), Text(words="" if gap.line is None else str(gap.line)),
-            Text(words=gap.taken), Blank(),
+            Text(words=gap.path, strong=True),
+            Text(words="" if gap.line is None else str(gap.line)),
+            Text(words=gap.taken),
+            Blank(),
         )
         for gap in gaps
     )
@@ -38,8 +41,10 @@ def properties(brief: Brief) -> Table:
             result, evidence = brief.say("proof.holds" if verdict.holds else "proof.fails"), verdict.evidence
         rows.append(
             (
-                Text(words=name, strong=True), Text(words=brief.say(f"proof.meanings.{key}")),
-                Text(words=result, strong=True), Text(words=evidence),
+                Text(words=name, strong=True),
+                Text(words=brief.say(f"proof.meanings.{key}")),
+                Text(words=result, strong=True),
+                Text(words=evidence),
             )
         )
     return Table(title=brief.say("proof.title"), columns=columns, rows=tuple(rows), before=(brief.say("proof.before"),))
@@ -56,14 +61,17 @@ def grades(brief: Brief) -> Table:
             Text(words=brief.source(grade.source), strong=True),
             Text(words=" > ".join(grade.barriers) or brief.say("none")),
             Text(words=brief.say(f"grades.names.{grade.grade.value}")),
-            Text(
-                words=brief.say("grades.survives" if grade.survives_single_leak else "grades.fails"),
-                strong=not grade.survives_single_leak,
-            ),
+            Text(words=brief.say(f"grades.{_single(grade)}"), strong=not grade.survives_single_leak),
         )
         for grade in brief.plan.grades
     )
     return Table(title=brief.say("grades.title"), columns=columns, rows=rows, before=(brief.say("grades.before"),))
+
+
+def _single(grade: Grade) -> str:
+    if grade.survives_single_leak:
+        return "survives"
+    return "vent_free" if grade.grade is IsolationGrade.DRAINED else "fails"
 
 
 def figures(brief: Brief) -> tuple[Table, ...]:
@@ -71,7 +79,8 @@ def figures(brief: Brief) -> tuple[Table, ...]:
     given, measure = brief.figures, brief.measure
     usable = brief.say(
         "impairment.capacity_value",
-        left=measure.volumes(given.usable_left_m3), needed=measure.volume(given.usable_needed_m3),
+        left=measure.volumes(given.usable_left_m3),
+        needed=measure.volume(given.usable_needed_m3),
     )
     values = (
         ("temperature", measure.temperatures(given.temperature_k)),
@@ -82,7 +91,8 @@ def figures(brief: Brief) -> tuple[Table, ...]:
     )
     rows = tuple((Text(words=brief.say(f"figures.{key}"), strong=True), Text(words=value)) for key, value in values)
     columns = (
-        Column(title=brief.say("figures.what"), percent=64), Column(title=brief.say("figures.value"), percent=36)
+        Column(title=brief.say("figures.what"), percent=64),
+        Column(title=brief.say("figures.value"), percent=36),
     )
     tables = [Table(title=brief.say("figures.title"), columns=columns, rows=rows)]
     if given.banks:
@@ -128,9 +138,7 @@ def _trapped(brief: Brief) -> Table:
 
 def basis(brief: Brief) -> Table:
     """Which demand is answered where; clause numbers only of texts that were read."""
-    columns = (
-        Column(title=brief.say("basis.demand"), percent=68), Column(title=brief.say("basis.where"), percent=32)
-    )
+    columns = (Column(title=brief.say("basis.demand"), percent=68), Column(title=brief.say("basis.where"), percent=32))
     where = brief.plan.unit.identity.jurisdiction.value
     found = (*brief.wording.rows["basis.rows.all"], *brief.wording.rows[f"basis.rows.{where}"])
     rows = tuple((Text(words=demand), Text(words=answer)) for demand, answer in found)

@@ -7,20 +7,22 @@ from provenzero.document.brief import Brief
 from provenzero.document.figures import Band
 from provenzero.document.model import Column, SignOff, SignOffs, Table, Text
 from provenzero.failure.grade import IsolationGrade
-from provenzero.network.compile import LIQUID
+from provenzero.network.devices.pumps import LIQUID
 from provenzero.network.model import LineId, Medium, Source, SourceKind
+from provenzero.unit.model import Bank
 
 _COLUMNS = (("source", 24), ("type", 13), ("size", 17), ("hazard", 17), ("control", 16), ("after", 13))
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class _Group:
-    """Sources that stand in one row."""
+    """Sources that stand in one row. `left_pag`: what is left of them, where it is known better than by the plan."""
 
     name: str
     type: str
     sources: tuple[Source, ...]
     energy_j: Band | None = None
+    left_pag: Band | None = None
 
 
 def energies(brief: Brief) -> Table:
@@ -49,25 +51,36 @@ def _merged(rows: Sequence[tuple[Text, ...]]) -> list[tuple[Text, ...]]:
 def _groups(brief: Brief) -> Iterable[_Group]:
     left = list(brief.plan.network.sources)
     for bank in brief.plan.unit.banks:
-        figures = brief.figures.bank(bank.tag)
-        fluid = [s for s in left if s.id == bank.tag or s.id.startswith(f"{bank.tag}/")]
-        gas = [s for s in fluid if brief.plan.network.lines[s.line].medium is Medium.NITROGEN]
-        fluid = [s for s in fluid if s not in gas]
-        if fluid:
-            yield _Group(
-                name=brief.say("energy.fluid_group", bank=bank.tag), type="bank", sources=tuple(fluid),
-                energy_j=None if figures is None else figures.energy_charged_j,
-            )
-        if gas:
-            yield _Group(
-                name=brief.say("energy.gas_group", bank=bank.tag, count=str(bank.bottles)), type="gas",
-                sources=tuple(gas), energy_j=None if figures is None else figures.energy_drained_j,
-            )
-        left = [s for s in left if s not in fluid and s not in gas]
+        own = [s for s in left if s.id == bank.tag or s.id.startswith(f"{bank.tag}/")]
+        left = [s for s in left if s not in own]
+        yield from _bank(brief, bank, own)
     for source in left:
-        yield _Group(
-            name=source.name, type=_type(brief, source), sources=(source,), energy_j=brief.figures.energy_j.get(source.id)
-        )
+        energy = brief.figures.energy_j.get(source.id)
+        yield _Group(name=source.name, type=_type(brief, source), sources=(source,), energy_j=energy)
+
+
+def _bank(brief: Brief, bank: Bank, own: Sequence[Source]) -> Iterable[_Group]:
+    """Fluid side, nitrogen that is let out and nitrogen that stays, each with its energy if it is the whole bank's."""
+    figures = brief.figures.bank(bank.tag)
+    charged = None if figures is None else figures.energy_charged_j
+    gas = [s for s in own if brief.plan.network.lines[s.line].medium is Medium.NITROGEN]
+    fluid = tuple(s for s in own if s not in gas)
+    if fluid:
+        name = brief.say("energy.fluid_group", bank=bank.tag)
+        yield _Group(name=name, type="bank", sources=fluid, energy_j=charged)
+    out = tuple(s for s in gas if _emptied(brief, [s]))
+    stays = tuple(s for s in gas if s not in out)
+    drained = None if figures is None or (out and stays) else figures.energy_drained_j
+    if out:
+        name = brief.some(s.name for s in out)
+        yield _Group(name=name, type="gas", sources=out, energy_j=drained)
+    if stays:
+        key = "energy.gas_others" if out else "energy.gas_group"
+        name = brief.say(key, bank=bank.tag, count=str(len(stays)))
+        precharge = None
+        if figures is not None and all(brief.plan.isolated().high(s.line) <= 0.0 for s in fluid):
+            precharge = figures.precharge_pag
+        yield _Group(name=name, type="gas", sources=stays, energy_j=drained, left_pag=precharge)
 
 
 def _type(brief: Brief, source: Source) -> str:
@@ -86,7 +99,7 @@ def _row(brief: Brief, group: _Group) -> tuple[Text, ...]:
         Text(words=_size(brief, group)),
         Text(words=brief.say(f"energy.hazards.{group.type}")),
         Text(words=_control(brief, group), strong=True),
-        Text(words=_after(brief, group.sources)),
+        Text(words=_after(brief, group)),
     )
 
 
@@ -155,16 +168,19 @@ def _locked(brief: Brief, key: str, numbers: Sequence[int]) -> str:
 def _emptied(brief: Brief, sources: Sequence[Source]) -> bool:
     start, state = brief.plan.start(), brief.plan.isolated()
     return all(
-        s.kind is SourceKind.STORED and start.high(s.line) > brief.head_pag(s.line) >= state.high(s.line) for s in sources
+        s.kind is SourceKind.STORED and start.high(s.line) > brief.head_pag(s.line) >= state.high(s.line)
+        for s in sources
     )
 
 
-def _after(brief: Brief, sources: Sequence[Source]) -> str:
+def _after(brief: Brief, group: _Group) -> str:
     state = brief.plan.isolated()
-    if sources[0].kind is SourceKind.LIVE:
-        drive = sources[0].drive
+    if group.left_pag is not None:
+        return brief.say("energy.precharge", pressure=brief.measure.pressures(group.left_pag))
+    if group.sources[0].kind is SourceKind.LIVE:
+        drive = group.sources[0].drive
         return brief.say("energy.dead" if drive is not None and state.high(drive) <= 0.0 else "energy.live")
-    return _left(brief, [s.line for s in sources])
+    return _left(brief, [s.line for s in group.sources])
 
 
 def _left(brief: Brief, lines: Sequence[LineId]) -> str:
@@ -192,7 +208,7 @@ def _trapped(brief: Brief) -> list[tuple[Text, ...]]:
     vents = [lock.number for lock in brief.plan.locks if set(lock.keeps_open) & set(held)]
     control = _locked(brief, "drained", sorted(vents)) if vents else brief.say("energy.let_out")
     row = (
-        Text(words=brief.say("energy.trapped_group", names=brief.lines(held, most=6)), strong=True),
+        Text(words=brief.say("energy.trapped_group", names=brief.lines(held)), strong=True),
         Text(words=brief.say("energy.types.trapped")),
         Text(words=brief.say("energy.up_to", pressure=brief.measure.pressure(max(start.high(k) for k in held)))),
         Text(words=brief.say("energy.hazards.trapped")),

@@ -86,10 +86,12 @@ def _doubts(brief: Brief) -> tuple[Notice, ...]:
         notices.append(panel(brief, Signal.WARNING, "unverified"))
     if brief.plan.unheld:
         notices.append(panel(brief, Signal.WARNING, "unheld", names=brief.lines(brief.plan.unheld)))
-    single = [g for g in brief.plan.grades if not g.survives_single_leak]
-    if single:
-        tags = brief.some((tag for g in single for tag in g.barriers), most=6)
-        notices.append(panel(brief, Signal.WARNING, "single", names=tags))
+    weak = [tag for g in brief.plan.grades if not g.survives_single_leak for tag in g.barriers]
+    if weak:
+        notices.append(panel(brief, Signal.WARNING, "single", names=brief.some(weak, most=6)))
+    loose = [brief.source(g.source) for g in brief.plan.grades if not (g.survives_single_leak or g.barriers)]
+    if loose:
+        notices.append(panel(brief, Signal.WARNING, "loose", names=brief.some(loose)))
     return tuple(notices)
 
 
@@ -119,6 +121,7 @@ def _scope(brief: Brief) -> Bullets:
         *plan.job.limits,
         brief.say("scope.not_covered"),
         brief.say("scope.change"),
+        brief.say("scope.stop"),
         brief.say("scope.maker"),
     )
     return Bullets(title=brief.say("scope.title"), points=points)
@@ -174,7 +177,8 @@ def impairment(brief: Brief) -> Table:
     figures, measure = brief.figures, brief.measure
     capacity = brief.say(
         "impairment.capacity_value",
-        left=measure.volumes(figures.usable_left_m3), needed=measure.volume(figures.usable_needed_m3),
+        left=measure.volumes(figures.usable_left_m3),
+        needed=measure.volume(figures.usable_needed_m3),
     )
     rows.append((_strong(brief, "capacity"), Text(words=capacity), Blank(), Blank()))
     rows.append((_strong(brief, "charging"), Text(words=measure.durations(figures.charging_s)), Blank(), Blank()))

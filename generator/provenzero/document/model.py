@@ -136,9 +136,9 @@ class Reading:
 class StepCard:
     """One step on paper: one action, how it must end, the boxes for the hand, what to do if it is not so.
 
-    `device`: tag, plain name and location. `speaks_of`: the lines meant, where no device is. `unlock`, `lock`: the lock
-    that comes off before the action or goes on with it. `outcomes`: what eye and ear must find. `asks`: labels of further
-    boxes. `figures`: volumes and times to expect. `hold`: the words of a hold point, empty if the step is none.
+    `device`: tag, plain name and location. `speaks_of`: the lines meant, where no device is. `unlock`, `lock`: the
+    lock that comes off before the action or goes on with it. `outcomes`: what eye and ear must find. `asks`: labels
+    of further boxes. `figures`: volumes and times to expect. `hold`: words of a hold point, empty if it is none.
     """
 
     number: str

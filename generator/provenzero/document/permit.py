@@ -71,7 +71,12 @@ def _sections(brief: Brief) -> list[Section]:
     found = [
         _section(brief, "permit", *head(brief)),
         _section(
-            brief, "hazards", *cautions(brief), protection(brief), impairment(brief), energies(brief),
+            brief,
+            "hazards",
+            *cautions(brief),
+            protection(brief),
+            impairment(brief),
+            energies(brief),
             acknowledged(brief),
         ),
         _section(brief, "locks", *register(brief), roster(brief)),
@@ -84,17 +89,13 @@ def _sections(brief: Brief) -> list[Section]:
         _steps(brief, part.REINSTATE, count(brief)),
         _steps(brief, part.TEST),
         _section(brief, "signoff", handover(brief), *closing(brief)),
-        _section(
-            brief, "proof", properties(brief), grades(brief), *figures(brief), basis(brief), repeat(brief)
-        ),
+        _section(brief, "proof", properties(brief), grades(brief), *figures(brief), basis(brief), repeat(brief)),
     ]
     return [section for section in found if any(not isinstance(block, Words) for block in section.blocks)]
 
 
 def _section(brief: Brief, key: str, *blocks: Block, fresh: bool = False) -> Section:
-    return Section(
-        id=key, mark=brief.say(f"marks.{key}"), title=brief.say(f"titles.{key}"), blocks=blocks, fresh=fresh
-    )
+    return Section(id=key, mark=brief.say(f"marks.{key}"), title=brief.say(f"titles.{key}"), blocks=blocks, fresh=fresh)
 
 
 def _steps(brief: Brief, part: plan_model.Section, *after: Block, fresh: bool = False) -> Section:
@@ -106,6 +107,8 @@ def _steps(brief: Brief, part: plan_model.Section, *after: Block, fresh: bool = 
 def _drawing(brief: Brief) -> DrawingSlot:
     alternative = brief.say(
         "drawing.alternative",
-        unit=brief.plan.unit.identity.tag, job=brief.plan.job.title, on=brief.equipment(brief.plan.on),
+        unit=brief.plan.unit.identity.tag,
+        job=brief.plan.job.title,
+        on=brief.equipment(brief.plan.on),
     )
     return DrawingSlot(caption=brief.say("drawing.caption"), alternative=alternative)

@@ -16,7 +16,7 @@ from provenzero.state.model import State
 
 VERSION = 1
 
-Json: TypeAlias = None | bool | int | float | str | list["Json"] | dict[str, "Json"]
+Json: TypeAlias = bool | int | float | str | list["Json"] | dict[str, "Json"] | None
 
 
 def plan_json(
@@ -120,7 +120,7 @@ def _network(network: Network, start: State) -> Json:
             for gauge in network.gauges
         ],
         "initial": {
-            "positions": dict(start.positions),
+            "positions": {str(tag): position for tag, position in start.positions.items()},
             "pressures_pag": {line: list(interval) for line, interval in start.pressures.items()},
             "pistons": dict(start.pistons),
         },
@@ -147,7 +147,10 @@ def _device(device: Device) -> Json:
 
 def _passage(item: Passage) -> Json:
     found: dict[str, Json] = {
-        "passage": item.kind.value, "from": item.source, "to": item.target, "certain": item.certain
+        "passage": item.kind.value,
+        "from": item.source,
+        "to": item.target,
+        "certain": item.certain,
     }
     if item.set_pag is not None:
         found["set_pag"] = item.set_pag

@@ -22,15 +22,18 @@ def recheck(brief: Brief) -> Table:
     gauges = tuple(dict.fromkeys(e.gauge for s in brief.plan.steps for e in s.expect if s.reason == "zero_read"))
     shown = gauges[:_NAMED_GAUGES]
     columns = [Column(title=brief.say("recheck.due"), percent=12), Column(title=brief.say("recheck.time"), percent=12)]
-    columns += [Column(title=brief.say("recheck.gauge", gauge=tag), percent=40 // max(len(shown), 1)) for tag in shown]
+    columns += [Column(title=brief.say("recheck.gauge", gauge=tag), percent=36 // max(len(shown), 1)) for tag in shown]
     if not shown or len(gauges) > len(shown):
         columns.append(Column(title=brief.say("recheck.gauges"), percent=12))
     columns += [
-        Column(title=brief.say("recheck.bleeds"), percent=14), Column(title=brief.say("recheck.by"), percent=14)
+        Column(title=brief.say("recheck.bleeds"), percent=14),
+        Column(title=brief.say("recheck.by"), percent=14),
     ]
     rows: tuple[tuple[Cell, ...], ...] = tuple((Blank(),) * len(columns) for _ in range(_RECHECKS))
     return Table(
-        title=brief.say("recheck.title"), columns=tuple(columns), rows=rows,
+        title=brief.say("recheck.title"),
+        columns=tuple(columns),
+        rows=rows,
         before=(brief.say("recheck.before", interval=interval),),
     )
 
@@ -62,9 +65,7 @@ def handover(brief: Brief) -> Table:
     shares = (("off", 19), ("on", 19), ("time", 9), ("locks", 10), ("zero", 10), ("open", 21), ("until", 12))
     columns = tuple(Column(title=brief.say(f"handover.{key}"), percent=percent) for key, percent in shares)
     rows: tuple[tuple[Cell, ...], ...] = tuple((Blank(),) * len(columns) for _ in range(_SHIFTS))
-    return Table(
-        title=brief.say("handover.title"), columns=columns, rows=rows, before=(brief.say("handover.before"),)
-    )
+    return Table(title=brief.say("handover.title"), columns=columns, rows=rows, before=(brief.say("handover.before"),))
 
 
 def closing(brief: Brief) -> tuple[Block, ...]:

@@ -9,6 +9,7 @@ from provenzero.document.panels import panels
 from provenzero.network.model import Device, Medium
 from provenzero.plan.model import Expect, Section, Step, StepKind
 
+_MOST_LINES = 8
 _NAMED = {"keeps_out", "keeps_open", "let_out"}
 _MOVES = {
     StepKind.SET_AND_LOCK,
@@ -43,6 +44,8 @@ def _key(brief: Brief, step: Step) -> str:
         return "watch_unknown"
     if step.kind is StepKind.TEST_GAUGE and step.facts.get("gauges") == "0":
         return "test_gauges"
+    if step.kind is StepKind.TRY_OPERATE and "," in step.facts["function"]:
+        return "try_operate_each"
     if step.recharges is not None and brief.plan.network.lines[step.recharges].medium is not Medium.NITROGEN:
         return "refill"
     return step.kind.value
@@ -68,7 +71,7 @@ def _facts(brief: Brief, step: Step) -> dict[str, str]:
         **step.facts,
     }
     if "function" in step.facts:
-        facts["function"] = brief.function(step.facts["function"])
+        facts["function"] = brief.functions(step.facts["function"])
     if "on" in step.facts:
         facts["on"] = brief.equipment(step.facts["on"])
     return facts
@@ -87,13 +90,21 @@ def _card(brief: Brief, step: Step, warnings: tuple[Notice, ...]) -> StepCard:
         unlock=_unlock(brief, step),
         lock=_lock(brief, step),
         readings=tuple(_reading(brief, e) for e in step.expect),
-        outcomes=brief.wording.lists.get(outcomes, ()),
+        outcomes=(*_each(brief, step), *brief.wording.lists.get(outcomes, ())),
         asks=brief.wording.lists.get(asks, ()),
         figures=(*_figures(brief, figures), *_column(brief, step.expect)),
         why=_why(brief, step),
         otherwise=brief.say(otherwise),
         hold=brief.say("lock.hold") if step.hold_point else "",
     )
+
+
+def _each(brief: Brief, step: Step) -> tuple[str, ...]:
+    """One outcome for each of several functions that are tried in one step."""
+    names = step.facts.get("function", "").split(", ")
+    if step.kind is not StepKind.TRY_OPERATE or len(names) == 1:
+        return ()
+    return tuple(brief.say("step.try_operate_each.each", function=brief.function(name)) for name in names)
 
 
 def _device(device: Device) -> tuple[str, ...]:
@@ -103,7 +114,7 @@ def _device(device: Device) -> tuple[str, ...]:
 def _speaks_of(brief: Brief, step: Step) -> str:
     if step.kind in _MOVES or step.device is not None or step.recharges is not None or not step.lines:
         return ""
-    return brief.say("step.lines", names=brief.lines(step.lines, most=6))
+    return brief.say("step.lines", names=brief.lines(step.lines, most=_MOST_LINES))
 
 
 def _lock(brief: Brief, step: Step) -> str:
@@ -127,8 +138,10 @@ def _reading(brief: Brief, expect: Expect) -> Reading:
 def _figures(brief: Brief, figures: StepFigures) -> Iterable[str]:
     measure = brief.measure
     if figures.returned_m3 is not None:
-        yield brief.say("figure.returned", volume=measure.volumes(figures.returned_m3))
-    if figures.time_s is not None:
+        key = "figure.returned" if figures.time_s is None else "figure.returned_in"
+        volume, time = measure.volumes(figures.returned_m3), measure.durations(figures.time_s)
+        yield brief.say(key, volume=volume, time=time)
+    elif figures.time_s is not None:
         yield brief.say("figure.time", time=measure.durations(figures.time_s))
     if figures.rebound_pag is not None:
         yield brief.say("figure.rebound", pressure=measure.pressures(figures.rebound_pag))

@@ -60,7 +60,7 @@ def wording(data: Mapping[str, object]) -> Wording:
             case str():
                 texts[key] = value
             case Mapping():
-                stack += [(f"{key}.{k}" if key else str(k), v) for k, v in reversed(value.items())]
+                stack += [(f"{key}.{k}" if key else str(k), v) for k, v in reversed(list(value.items()))]
             case list() if value and all(isinstance(item, list) for item in value):
                 rows[key] = tuple(tuple(str(cell) for cell in item) for item in value)
             case list() if all(isinstance(item, str) for item in value):

@@ -91,6 +91,11 @@ class Canvas:
         return Group(kind=Kind.LINE, role=role, names=(line,), shapes=tuple(shapes))
 
 
+def band(points: tuple[Point, ...]) -> list[Shape]:
+    """One opened piece of line: a double outline with hatching."""
+    return [Polyline(points=points, pen=Pen.ZONE_EDGE), Polyline(points=points, pen=Pen.ZONE_CORE), *_hatch(points)]
+
+
 def _hatch(points: tuple[Point, ...]) -> list[Shape]:
     """Slanted strokes across a band, within its core."""
     strokes: list[Shape] = []

@@ -21,6 +21,8 @@ from provenzero.drawing.symbols import (
     tank,
 )
 from provenzero.drawing.tags import (
+    CORNER,
+    GAP,
     LABEL_HEIGHT,
     LOCK_HALF,
     VENT_HEIGHT,
@@ -97,28 +99,27 @@ def device_cell(  # noqa: PLR0913 - a device is its tag, its symbol and its two 
     words, lock, where = tag(name), scene.lock(name), scene.vent(name)
     body = symbol.body.grown(BOX_MARGIN) if lock is not None else symbol.body
     half = max(words.width / 2 + ROOM, _NARROWEST)
-    beyond = 0.5 + words.height + (0.0 if where is None else 0.5 + VENT_HEIGHT)
-    corner = LOCK_HALF + 0.6 if lock is not None else 0.0
-    left = half if lock is None else max(half, 0.6 - body.left + lock_half(lock))
-    right = half if where is None else max(half, vent_width(scene, where) / 2 + ROOM)
+    if where is not None:
+        half = max(half, vent_width(scene, where) / 2 + ROOM)
+    beyond = words.reach + (0.0 if where is None else GAP + VENT_HEIGHT)
+    corner = LOCK_HALF + CORNER if lock is not None else 0.0
+    left = half if lock is None else max(half, CORNER - body.left + lock_half(lock))
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
-        canvas.symbol(symbol, (x, y), name, boxed=lock is not None)
-        edge = y + (body.top if tags_above else body.bottom)
-        (words.above if tags_above else words.below)(canvas, x, edge, name)
+        placed = canvas.symbol(symbol, (x, y), name, boxed=lock is not None)
+        (words.above if tags_above else words.below)(canvas, x, placed, name)
         if lock is not None:
-            at = (x + body.left - 0.6, y + (body.bottom + 0.6 if tags_above else body.top - 0.6))
-            lozenge(canvas, at, lock, name)
+            lozenge(
+                canvas, (placed.left - CORNER, placed.bottom + CORNER if tags_above else placed.top - CORNER), lock, name
+            )
         if where is not None:
-            top = edge - beyond if tags_above else edge + 1.0 + words.height
+            top = placed.top - beyond if tags_above else placed.bottom + beyond - VENT_HEIGHT
             vent_mark(canvas, scene, where, (x - vent_width(scene, where) / 2, top), name)
 
     return Cell(
-        left=max(left, right if where is not None else 0.0), right=right,
-        up=beyond - body.top if tags_above else corner - body.top,
-        down=corner + body.bottom if tags_above else body.bottom + beyond,
-        line_in=line_in, line_out=line_out, body=(symbol.body.left, symbol.body.right),
-        clear=body.left if lock is None else -left, paint=paint,
+        left=left, right=half, up=(beyond if tags_above else corner) - body.top,
+        down=body.bottom + (corner if tags_above else beyond), line_in=line_in, line_out=line_out,
+        body=(symbol.body.left, symbol.body.right), clear=body.left if lock is None else -left, paint=paint,
     )
 
 
@@ -128,56 +129,62 @@ def standing(scene: Scene, fitting: Fitting, line: LineId, *, below: bool = Fals
         case Instrument():
             return _instrument(scene, fitting, line, below=below)
         case Bleed():
-            valve = fitting.valve
-            parts = [_Part(valve.tag, shut_off(scene.position(valve.tag) == "open", valve.exhausts), locked_tag(scene, valve.tag))]
-            return _branch(scene, parts, line, LineId(fitting.to), below=below)
+            return _branch(scene, [_shut(scene, fitting.valve)], line, LineId(fitting.to), below=below)
         case Relief():
-            return _branch(scene, [_Part(fitting.tag, relief(), tag(fitting.tag))], line, LineId(fitting.to), below=below)
+            return _branch(scene, [Part(fitting.tag, relief(), tag(fitting.tag))], line, LineId(fitting.to), below=below)
 
 
 @dataclass(frozen=True, slots=True)
-class _Part:
+class Part:
+    """A device that is put with its tag over or under it, and its lock at the corner of its box."""
+
     name: str
     symbol: Symbol
     words: Tag
 
     @property
+    def body(self) -> Box:
+        """The body, with the box of an isolation point."""
+        return self.symbol.body if self.words.lock is None else self.symbol.body.grown(BOX_MARGIN)
+
+    @property
     def left(self) -> float:
-        return max(-self.symbol.body.left, self.words.width / 2)
+        """Room to the left of the origin [mm]."""
+        return max(-self.body.left, self.words.left(self.body))
 
     @property
     def right(self) -> float:
-        return max(self.symbol.body.right, self.words.width / 2)
+        """Room to the right of the origin [mm]."""
+        return max(self.body.right, self.words.right(self.body))
+
+    def paint(self, canvas: Canvas, at: tuple[float, float], *, below: bool) -> Box:
+        """Put the device; returns its body."""
+        placed = canvas.symbol(self.symbol, at, self.name, boxed=self.words.lock is not None)
+        (self.words.below if below else self.words.above)(canvas, at[0], placed, self.name)
+        return placed
 
 
 def _instrument(scene: Scene, item: Instrument, line: LineId, *, below: bool) -> Cell:
-    dial = _Part(item.tag, instrument(item.kind), tag(item.tag))
+    dial = Part(item.tag, instrument(item.kind), tag(item.tag))
     if item.valve is not None:
-        valve = item.valve
-        shut = _Part(valve.tag, shut_off(scene.position(valve.tag) == "open", valve.exhausts), locked_tag(scene, valve.tag))
-        return _branch(scene, [shut, dial], line, None, below=below)
+        return _branch(scene, [_shut(scene, item.valve), dial], line, None, below=below)
     sign = 1 if below else -1
     room = dial.right + ROOM
-    reach = RISE - dial.symbol.body.top + 0.5 + dial.words.height
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
-        at = (x, y + sign * RISE)
-        body = canvas.symbol(dial.symbol, at, dial.name)
+        body = dial.paint(canvas, (x, y + sign * RISE), below=below)
         canvas.wire(line, (x, y), (x, body.top if below else body.bottom))
         canvas.dot(line, (x, y))
-        _words(canvas, dial, x, body, below=below)
 
-    return _standing_cell(line, room, room, reach, below=below, paint=paint)
-
-
-def _words(canvas: Canvas, part: _Part, x: float, body: Box, *, below: bool) -> None:
-    if below:
-        part.words.below(canvas, x, body.bottom, part.name)
-    else:
-        part.words.above(canvas, x, body.top, part.name)
+    return _on_line(line, room, room, RISE - dial.body.top + dial.words.reach, below=below, paint=paint)
 
 
-def _standing_cell(
+def _shut(scene: Scene, valve: Valve) -> Part:
+    symbol = shut_off(scene.position(valve.tag) == "open", valve.exhausts)
+    return Part(valve.tag, symbol, locked_tag(scene, valve.tag))
+
+
+def _on_line(  # noqa: PLR0913 - a cell is its extents and its paint
     line: LineId, left: float, right: float, reach: float, *, below: bool, paint: Callable[[Canvas, float, float], None]
 ) -> Cell:
     return Cell(
@@ -186,54 +193,46 @@ def _standing_cell(
     )
 
 
-def _branch(scene: Scene, parts: list[_Part], line: LineId, to: LineId | None, *, below: bool) -> Cell:
+def _branch(scene: Scene, parts: list[Part], line: LineId, to: LineId | None, *, below: bool) -> Cell:
     """A stub from a line, then devices side by side, then an outlet or nothing."""
     sign = 1 if below else -1
-    margin = max(BOX_MARGIN if part.words.lock is not None else 0.0 for part in parts)
-    places = [max(1.6 + margin - parts[0].symbol.body.left, 0.0)]
+    places = [max(1.6 - parts[0].body.left, 0.4 + parts[0].left if below else 0.0)]
     for one, other in pairwise(parts):
-        places.append(places[-1] + max(one.right + ROOM + other.left, one.symbol.body.right + LEAD - other.symbol.body.left))
-    last = parts[-1]
-    out = places[-1] + last.symbol.body.right + margin + 2.1
-    ends = [scene.ends(part.name)[1] for part in parts if part.name in scene.network.devices]
-    where = next((v for v in (scene.vent(part.name) for part in parts) if v is not None), None)
-    stub = ends[0] if to is None and scene.told(ends[0]) else None
-    edge = max(max(-p.symbol.body.top, p.symbol.body.bottom) for p in parts) + margin
+        apart = max(one.right + ROOM + other.left, one.body.right + LEAD - other.body.left)
+        places.append(places[-1] + apart)
+    out = places[-1] + parts[-1].body.right + 2.1
+    where = scene.vent(parts[0].name)
+    stub = scene.ends(parts[0].name)[1] if to is None else None
+    told = scene.told(stub) if stub is not None else ""
+    edge = max((p.body.bottom if below else -p.body.top) + p.words.reach for p in parts)
     if below and to is not None:
-        edge = max(edge, 4.2)
-    tall = max(part.words.height for part in parts) + 0.5
-    extra = (0.5 + VENT_HEIGHT if where is not None else 0.0) + (0.5 + LABEL_HEIGHT if stub is not None else 0.0)
-    widths = [vent_width(scene, where)] if where is not None else []
-    widths += [label_width(scene.told(stub))] if stub is not None else []
-    right = max(out + 1.9 if to is not None else 0.0, places[-1] + last.right, *widths) + ROOM
+        edge = max(edge, 4.6)
+    width = max(0.0 if where is None else vent_width(scene, where), label_width(told) if told else 0.0)
+    right = max(out + 1.9 if to is not None else 0.0, places[-1] + parts[-1].right, width) + ROOM
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
         level = y + sign * RISE
         canvas.dot(line, (x, y))
-        here, at = line, x
-        corner = [(x, y)]
+        here, points = line, [(x, y), (x, level)]
         for place, part in zip(places, parts, strict=True):
-            canvas.symbol(part.symbol, (x + place, level), part.name, boxed=part.words.lock is not None)
-            canvas.wire(here, *corner, (at, level), (x + place + part.symbol.body.left, level))
-            if part.name in scene.network.devices:
-                here = scene.ends(part.name)[1]
-            at = x + place + part.symbol.body.right
-            corner = []
-            far = level + sign * edge
-            (part.words.below if below else part.words.above)(canvas, x + place, far, part.name)
+            canvas.wire(here, *points, (x + place + part.symbol.body.left, level))
+            part.paint(canvas, (x + place, level), below=below)
+            here = stub or to or line
+            points = [(x + place + part.symbol.body.right, level)]
         if to is not None:
-            canvas.wire(to, (at, level), (x + out, level), (x + out, level + 1.4))
+            canvas.wire(to, *points, (x + out, level), (x + out, level + 1.4))
             outlet(canvas, scene, to, (x + out, level + 1.4))
-        beyond = level + sign * (edge + tall)
+        beyond = level + sign * (edge + GAP)
         if where is not None:
-            top = beyond + 0.5 if below else beyond - 0.5 - VENT_HEIGHT
-            vent_mark(canvas, scene, where, (x, top), parts[0].name)
-        if stub is not None:
-            middle = beyond + sign * (extra - LABEL_HEIGHT / 2)
-            label(canvas, scene, stub, (x + label_width(scene.told(stub)) / 2, middle))
+            vent_mark(canvas, scene, where, (x, beyond if below else beyond - VENT_HEIGHT), parts[0].name)
+        if stub is not None and told:
+            label(canvas, scene, stub, (x + label_width(told) / 2, beyond + sign * LABEL_HEIGHT / 2))
 
-    left = max(parts[0].left - places[0], 0.5) + ROOM
-    return _standing_cell(line, left, right, RISE + edge + tall + extra, below=below, paint=paint)
+    extra = GAP + max(0.0 if where is None else VENT_HEIGHT, LABEL_HEIGHT if told else 0.0)
+    return _on_line(
+        line, max(parts[0].left - places[0], 0.5) + ROOM, right, RISE + edge + (extra if width else 0.0),
+        below=below, paint=paint,
+    )
 
 
 def outlet(canvas: Canvas, scene: Scene, to: LineId, at: tuple[float, float], *names: str) -> None:

@@ -38,14 +38,19 @@ class _Stretch:
 
 
 class Row:
-    """A row of cells from one end to the other. `first`: the line at its left end. `silent`: lines named elsewhere."""
+    """A row of cells from one end to the other. `first`: the line at its left end. `silent`: lines named elsewhere.
+
+    `from_first`: the line begins under the first cell and not at the left end.
+    """
 
     def __init__(
-        self, scene: Scene, first: LineId, cells: list[Cell], *, limit_mm: float, silent: frozenset[LineId]
+        self, scene: Scene, first: LineId, cells: list[Cell], *, limit_mm: float, silent: frozenset[LineId],
+        from_first: bool = False,
     ) -> None:
         self._scene = scene
         self._first = first
         self._silent = silent
+        self._begin = cells[0].left if from_first and cells else 0.0
         self._levels = self._spread(cells, limit_mm)
         self.width = max(_width(level.cells) for level in self._levels)
         if len(self._levels) > 1:
@@ -57,8 +62,9 @@ class Row:
 
     def draw(self, canvas: Canvas, x: float, y: float, end: float) -> None:
         """Draw the row from x at the height y; its last line goes on to the end."""
-        stretch = _Stretch(self._first, [(x, y)], [(x, 0)])
-        clear = x
+        begin = x + self._begin
+        stretch = _Stretch(self._first, [(begin, y)], [(begin, 0)])
+        clear = begin
         for number, level in enumerate(self._levels):
             here, base = x, y + level.offset
             if number:
@@ -74,7 +80,7 @@ class Row:
                     stretch.points.append((at + cell.body[0], base))
                     self._finish(canvas, stretch, x, y)
                     stretch = _Stretch(cell.line_out, [(at + cell.body[1], base)])
-                    clear = at + cell.body[1]
+                    clear = at + cell.body[1] + 1.0
                 else:
                     stretch.free.append((clear, at - 1.0, number))
                     clear = at + 1.0

@@ -296,3 +296,28 @@ def _capsule(w: float, h: float) -> tuple[Shape, ...]:
         Arc(start=(-w, w - h), end=(w, w - h), radius=w, pen=Pen.SYMBOL),
         Arc(start=(w, -w), end=(-w, -w), radius=w, pen=Pen.SYMBOL),
     )
+
+
+@cache
+def shaft(length: float) -> Symbol:
+    """The shaft between a pump and what turns it, upward from its lower end."""
+    shapes = (stroke((-0.4, 0), (-0.4, -length)), stroke((0.4, 0), (0.4, -length)))
+    return Symbol(shapes=shapes, body=Box(-0.4, -length, 0.4, 0))
+
+
+@cache
+def upright_shut_off(opened: bool) -> Symbol:
+    """A shut-off valve in a line that goes up."""
+    fill = Fill.PAPER if opened else Fill.INK
+    w, h = 1.75, VALVE_HALF
+    shapes: list[Shape] = [area((-w, -h), (0, 0), (w, -h), fill=fill), area((-w, h), (0, 0), (w, h), fill=fill)]
+    if not opened:
+        shapes.append(stroke((-2.0, 0), (2.0, 0), pen=Pen.HEAVY))
+    return Symbol(shapes=tuple(shapes), body=Box(-2.0, -h, 2.0, h))
+
+
+@cache
+def entry() -> Symbol:
+    """Where the return header runs into the reservoir."""
+    shapes = (stroke((-1.1, -0.4), (1.1, -0.4)), stroke((-1.1, 0.4), (1.1, 0.4)))
+    return Symbol(shapes=shapes, body=Box(-1.1, -0.4, 1.1, 0.4))

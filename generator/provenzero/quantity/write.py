@@ -64,6 +64,12 @@ _SIGNS: Final = {TemperatureUnit.DEG_F: "°F", TemperatureUnit.DEG_C: "°C"}
 _Rounding = Callable[[float], float]
 
 
+def _finite(value: float) -> float:
+    if not math.isfinite(value):
+        raise ValueError(f"{value} is no measured value")
+    return value
+
+
 def _nearest(value: float) -> float:
     return math.floor(value + 0.5 + _NOISE)
 
@@ -144,6 +150,7 @@ class Units:
 
     def bore(self, metre: float) -> str:
         """A bore [m]: in inches and sixteenths where it is one, as the trade says it, else in decimals."""
+        _finite(metre)
         return _joined(
             [_bore_in(metre) if u is LengthUnit.FT else _bore_mm(metre) for u in self.length_units]
         )
@@ -157,8 +164,8 @@ class Units:
 
     def duration(self, seconds: float) -> str:
         """A time [s], in the two largest units that matter."""
-        if not math.isfinite(seconds) or seconds < 0.0:
-            raise ValueError(f"{seconds} is not a time")
+        if _finite(seconds) < 0.0:
+            raise ValueError(f"{seconds} s is not a duration")
         if seconds == 0.0:
             return f"0{NO_BREAK}s"
         if seconds < _SECONDS_UP_TO_S:
@@ -197,9 +204,7 @@ def _written(si: float, dimension: Dimension, unit: str, steps: _Steps, rounding
 
 
 def _number(value: float, steps: _Steps, rounding: _Rounding) -> str:
-    if not math.isfinite(value):
-        raise ValueError(f"{value} cannot be written as a measured value")
-    if abs(value) < _NOISE:
+    if abs(_finite(value)) < _NOISE:
         return "0"
     step = next(step for least, step in steps if abs(value) >= least * (1.0 - _NOISE))
     rounded = rounding(value / step) * step

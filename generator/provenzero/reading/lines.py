@@ -238,9 +238,7 @@ class _Builder:
             self._add(None, position)
 
     def _awaits_key(self) -> bool:
-        return (
-            bool(self._stack) and isinstance(self._stack[-1].container, dict) and self._stack[-1].key is None
-        )
+        return bool(self._stack) and isinstance(self._stack[-1].container, dict) and self._stack[-1].key is None
 
     def _here(self) -> Steps:
         """The path of the value to come."""

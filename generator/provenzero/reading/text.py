@@ -26,9 +26,7 @@ def read_text(path: Path) -> str | list[Finding]:
         return [_finding(file, "a folder" if path.is_dir() else "a file closed to you", expected)]
     except (OSError, ValueError) as error:
         reason = error.strerror if isinstance(error, OSError) and error.strerror else "not a path"
-        return [
-            _finding(file, f"a file that cannot be read ({reason})", "the path of a file that can be read")
-        ]
+        return [_finding(file, f"a file that cannot be read ({reason})", "the path of a file that can be read")]
     if len(content) > LARGEST_BYTES:
         return [_finding(file, "more than 1 MiB", "a description of at most 1 MiB, as a person writes it")]
     return decoded(content, file)
@@ -58,7 +56,5 @@ def _position(before: str) -> tuple[int, int]:
     return line, len(before) - (before.rfind("\n") + 1) + 1
 
 
-def _finding(
-    file: str, found: str, expected: str, line: int | None = None, column: int | None = None
-) -> Finding:
+def _finding(file: str, found: str, expected: str, line: int | None = None, column: int | None = None) -> Finding:
     return Finding(place=Place(file=file, line=line, column=column), found=found, expected=expected)

@@ -15,7 +15,7 @@ _FULL: Final = frozenset({errno.ENOSPC, errno.EDQUOT})
 def write_atomically(path: Path, content: bytes) -> Finding | None:
     """Write a file in one step; a finding if that could not be done, and then nothing has changed.
 
-    The bytes go to a file beside the target, are forced to the disk, and take the target's name last. A target
+    The bytes go to a file beside the target, are forced to the disk, and take its name last. A target
     that is a link stays one: what it leads to is replaced.
     """
     target = Path(os.path.realpath(path))
@@ -70,9 +70,7 @@ def _reason(error: OSError | ValueError, path: Path, size: int) -> Finding:
         case OSError() if error.errno in _FULL:
             return _finding(path, "a full disk; nothing was written", f"room for {size} bytes in {folder}")
         case OSError() if error.errno == errno.EROFS:
-            return _finding(
-                path, f"the folder {folder} on a read-only disk", "a folder that can be written in"
-            )
+            return _finding(path, f"the folder {folder} on a read-only disk", "a folder that can be written in")
         case OSError() if error.strerror:
             return _finding(path, f"a file that cannot be written ({error.strerror})", "another path")
         case _:

@@ -46,9 +46,16 @@ def html(document: Document, svg: str) -> str:
         raise ValueError("the drawing is not an SVG element")
     style = _style(document)
     digest = b64encode(sha256(style.encode()).digest()).decode()
-    return _environment().get_template("document.html").render(
-        document=document, drawing=Markup(drawing), style=Markup(style), style_hash=digest
+    return (
+        _environment()
+        .get_template("document.html")
+        .render(document=document, drawing=_ours(drawing), style=_ours(style), style_hash=digest)
     )
+
+
+def _ours(markup: str) -> Markup:
+    """Markup of our own making: the style sheet and the drawing, whose words were escaped when it was drawn."""
+    return Markup(markup)  # noqa: S704
 
 
 class _Pages(BaseLoader):
@@ -95,7 +102,7 @@ def _page(document: Document) -> str:
 
 def _string(words: str) -> str:
     """A CSS string that holds exactly these words."""
-    return '"' + "".join(c if c.isalnum() and c.isascii() or c == " " else f"\\{ord(c):x} " for c in words) + '"'
+    return '"' + "".join(c if (c.isalnum() and c.isascii()) or c == " " else f"\\{ord(c):x} " for c in words) + '"'
 
 
 def _font(name: str, weight: int) -> str:

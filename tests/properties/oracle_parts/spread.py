@@ -221,7 +221,7 @@ def _floors(bodies: _Bodies, links: tuple[_Link, ...]) -> dict[int, float]:
     emptied = bodies.swallows | {k.up for k in links if k.supplies and k.down in bodies.swallows}
     kept = bodies.surely_live | (bodies.gas - emptied)
     floor = {body: low if body in kept else 0.0 for body, low in bodies.low.items()}
-    sure = [k for k in links if k.way.certain and k.supplies and k.down not in emptied]
+    sure = [k for k in links if k.way.certain and k.down not in emptied]
     grew = True
     while grew:
         grew = False

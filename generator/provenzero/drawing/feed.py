@@ -1,0 +1,61 @@
+"""Where the energy of a pump or a panel comes from: a flag with the supply, then the device that cuts it."""
+
+from collections.abc import Callable
+from dataclasses import dataclass
+
+from provenzero.drawing.canvas import Canvas
+from provenzero.drawing.cells import LEAD, ROOM, Part
+from provenzero.drawing.plates import flag_width, from_flag
+from provenzero.drawing.scene import Scene
+from provenzero.drawing.symbols import isolator, shut_off
+from provenzero.drawing.tags import GAP, LABEL_HEIGHT, VENT_HEIGHT, label, label_width, locked_tag, vent_mark, vent_width
+from provenzero.network.model import LineId
+from provenzero.unit.model import Isolator, Valve
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Feed:
+    """A chain that ends where the energy is used. `draw` takes the right end and the height of the chain."""
+
+    width: float
+    up: float
+    down: float
+    draw: Callable[[Canvas, float, float], None]
+
+
+def feed(scene: Scene, words: str, supply: LineId, load: LineId, device: Valve | Isolator | None) -> Feed:
+    """The chain from a supply to a load, through the device that cuts it if there is one."""
+    flag = from_flag(words)
+    if device is None:
+        def bare(canvas: Canvas, right: float, y: float) -> None:
+            canvas.symbol(flag, (right - LEAD, y))
+            canvas.wire(supply, (right - LEAD, y), (right, y))
+
+        return Feed(width=flag_width(words) + LEAD, up=2.0, down=2.0, draw=bare)
+    if isinstance(device, Valve):
+        symbol = shut_off(scene.position(device.tag) == "open", device.exhausts)
+    else:
+        symbol = isolator(scene.position(device.tag) == "on")
+    part = Part(device.tag, symbol, locked_tag(scene, device.tag))
+    where = scene.vent(device.tag)
+    told = scene.told(load)
+    after = LEAD + (label_width(told) + 1.0 if told else 0.0)
+    right = max(part.body.right + after, part.right + ROOM)
+    left = max(LEAD - part.body.left, part.left - flag_width(words) + ROOM)
+    extra = 0.0 if where is None else VENT_HEIGHT + GAP
+
+    def draw(canvas: Canvas, end: float, y: float) -> None:
+        x = end - right
+        part.paint(canvas, (x, y), below=False)
+        canvas.symbol(flag, (x - left, y))
+        canvas.wire(supply, (x - left, y), (x + symbol.body.left, y))
+        canvas.wire(load, (x + symbol.body.right, y), (end, y))
+        label(canvas, scene, load, (end - (after - 1.0) / 2 - 0.5, y))
+        if where is not None:
+            corner = (x - vent_width(scene, where) / 2, y + part.body.top - part.words.reach - extra)
+            vent_mark(canvas, scene, where, corner, device.tag)
+
+    return Feed(
+        width=flag_width(words) + left + right, up=part.words.reach - part.body.top + extra,
+        down=max(part.body.bottom, LABEL_HEIGHT / 2), draw=draw,
+    )

@@ -1,0 +1,82 @@
+"""Pumps as rows from the suction line to the line they deliver to, with what drives them over them."""
+
+from provenzero.drawing.block import Block, Tap
+from provenzero.drawing.canvas import Canvas
+from provenzero.drawing.cells import LEAD, ROOM, Cell, device_cell, standing, through
+from provenzero.drawing.feed import Feed, feed
+from provenzero.drawing.row import Row
+from provenzero.drawing.scene import AIR, Inline, Scene
+from provenzero.drawing.symbols import DRIVE_RADIUS, PUMP_RADIUS, check_valve, drive, pump, shaft
+from provenzero.drawing.tags import tag
+from provenzero.network.devices.pumps import LIQUID
+from provenzero.network.model import LineId
+from provenzero.unit.model import CheckValve, Drive, Element, Fitting, Pump
+
+_DRIVE_RISE = 9.6
+
+
+def pump_block(scene: Scene, item: Pump, limit_mm: float, silent: frozenset[LineId]) -> Block:
+    """One pump with everything between its suction and its delivery."""
+    cells = elements(scene, item.suction, LIQUID)
+    before = sum(cell.left + cell.right for cell in cells) if all(c.body is not None for c in cells) else 0.0
+    suction = scene.port(item.tag, "suction") or LIQUID
+    discharge = scene.port(item.tag, "discharge") or LineId(item.delivers_to)
+    cells.append(_pump_cell(scene, item, suction, discharge, before))
+    rest = item.discharge
+    if rest and isinstance(rest[0], CheckValve):
+        cells.append(device_cell(scene, rest[0].tag, check_valve(), discharge, discharge))
+        rest = rest[1:]
+    cells += elements(scene, rest, discharge)
+    row = Row(scene, LIQUID, cells, limit_mm=limit_mm, silent=silent)
+    return Block(
+        names=(item.tag,), width=row.width, up=row.up, down=row.down, left=(Tap(LIQUID),),
+        right=(Tap(LineId(item.delivers_to), row.out),), draw=row.draw,
+    )
+
+
+def elements(scene: Scene, run: tuple[Element, ...], start: LineId, *, tags_above: bool = False) -> list[Cell]:
+    """The cells of a run: what the fluid goes through, and what stands on the line where it has come to."""
+    cells: list[Cell] = []
+    here = start
+    for element in run:
+        if isinstance(element, Inline):
+            cells.append(through(scene, element, tags_above=tags_above))
+            here = cells[-1].line_out
+        else:
+            cells.append(standing(scene, element, here))
+    return cells
+
+
+def fittings(scene: Scene, items: tuple[Fitting, ...], line: LineId, *, below: bool = False) -> list[Cell]:
+    """The cells of fittings that stand on one line."""
+    return [standing(scene, item, line, below=below) for item in items]
+
+
+def _pump_cell(scene: Scene, item: Pump, suction: LineId, discharge: LineId, before: float) -> Cell:
+    words = tag(item.tag)
+    energy = _energy(scene, item)
+    half = max(words.width / 2 + ROOM, PUMP_RADIUS + LEAD)
+    needed = 0.0 if energy is None else energy.width + DRIVE_RADIUS + ROOM - before
+
+    def paint(canvas: Canvas, x: float, y: float) -> None:
+        body = canvas.symbol(pump(), (x, y), item.tag)
+        words.below(canvas, x, body, item.tag)
+        canvas.symbol(shaft(_DRIVE_RISE - PUMP_RADIUS - DRIVE_RADIUS), (x, y - PUMP_RADIUS))
+        canvas.symbol(drive(item.drive), (x, y - _DRIVE_RISE))
+        if energy is not None:
+            energy.draw(canvas, x - DRIVE_RADIUS, y - _DRIVE_RISE)
+
+    return Cell(
+        left=max(half, needed), right=half, up=_DRIVE_RISE + max(DRIVE_RADIUS, 0.0 if energy is None else energy.up),
+        down=PUMP_RADIUS + words.reach, line_in=suction, line_out=discharge, body=(-PUMP_RADIUS, PUMP_RADIUS),
+        clear=-PUMP_RADIUS, paint=paint,
+    )
+
+
+def _energy(scene: Scene, item: Pump) -> Feed | None:
+    load = scene.port(item.tag, "drive")
+    if load is None:
+        return None
+    if item.drive is Drive.AIR:
+        return feed(scene, scene.wording.air, AIR, load, item.energy)
+    return feed(scene, item.supply, LineId(f"supply.{item.supply}"), load, item.energy)
