@@ -12,8 +12,8 @@ from tests.properties.oracle import (
     reversible,
 )
 from tests.properties.oracle_parts.small_unit import (
-    FULL,
     Entry,
+    bottles,
     device,
     fixed,
     line,
@@ -156,10 +156,22 @@ class TestLocked:
         add(plan, fixed("CV", way(f"run {kind} header", 25e6)))
         assert "-(CV in fitted)-> run" in locked(plan).evidence
 
-    def test_a_vent_swallows_what_comes(self) -> None:
+    @pytest.mark.parametrize(("one", "other"), [("header", "tank"), ("tank", "header")])
+    def test_a_vent_swallows_what_comes(self, one: str, other: str) -> None:
         plan = small_plan()
-        add(plan, valve("HB", "header", "tank"), "closed")
+        add(plan, valve("HB", one, other), "closed")
+        add(plan, valve("TB", "tank", "run"), "closed")
         assert locked(plan).holds
+
+    def test_what_nobody_can_move_stays_as_it_is(self) -> None:
+        plan = small_plan()
+        add(plan, fixed("BL") | {"positions": {"blind": [], "swung": [way("header open run")]}})
+        assert locked(plan).holds
+
+    def test_bottles_behind_an_unlocked_valve_are_a_source(self) -> None:
+        plan = small_plan()
+        add(plan, valve("BY", "bank", "run"), "closed")
+        assert "(stored source bottles) bank -(BY in open)-> run" in locked(plan).evidence
 
     def test_a_lock_on_the_handle_does_not_stop_a_pilot_that_can_get_air(self) -> None:
         plan = _with_pilot()
@@ -170,6 +182,11 @@ class TestLocked:
     def test_a_lock_that_withstands_the_pilot_is_enough(self) -> None:
         plan = _with_pilot()
         find(plan, "SV")["lock_holds_against"] = ["hand", "pilot"]
+        assert locked(plan).holds
+
+    def test_a_lock_need_not_withstand_a_hand_that_can_not_move_the_device(self) -> None:
+        plan = _with_pilot()
+        find(plan, "SV").update(moved_by=["pilot"], lock_holds_against=["pilot"])
         assert locked(plan).holds
 
     def test_a_lock_that_does_not_withstand_the_hand_is_none(self) -> None:
@@ -196,6 +213,22 @@ class TestLocked:
         add(plan, fixed("SP") | {"positions": spring, "on_loss": {"line": "air", "position": "fallen"}})
         assert "-(SP in fallen)-> run" in locked(plan).evidence
 
+    def test_a_device_that_fell_on_loss_of_air_may_come_back_with_it(self) -> None:
+        plan = small_plan()
+        add_line(plan, line("air", "air"))
+        spring = {"held": [way("header open run")], "fallen": []}
+        add(plan, fixed("SP") | {"positions": spring, "on_loss": {"line": "air", "position": "fallen"}})
+        assert dead(plan).holds
+        assert "-(SP in held)-> run" in locked(plan).evidence
+
+    def test_a_locked_device_may_fall_on_loss_of_air_unless_its_lock_withstands_that(self) -> None:
+        plan = small_plan()
+        add_line(plan, line("air", "air"), [7e5, 8e5])
+        find(plan, "SV")["on_loss"] = {"line": "air", "position": "open"}
+        assert "-(SV in open)-> run" in locked(plan).evidence
+        find(plan, "SV")["lock_holds_against"] = ["hand", "air"]
+        assert locked(plan).holds
+
     def test_many_devices_are_not_tried_stand_by_stand(self) -> None:
         plan = small_plan()
         for k in range(16):
@@ -218,10 +251,9 @@ def _with_pilot(*, air_locked: bool = False) -> Entry:
 
 
 def _only_the_pump_locked_out() -> Entry:
-    """No bottles; the breaker is the one barrier; the header is drained with it."""
+    """The breaker is the one barrier; the header is drained with the bottles."""
     plan = small_plan()
     add(plan, valve("HB", "header", "tank"), "closed")
-    plan["network"]["sources"] = plan["network"]["sources"][:2]
     plan["steps"] = [
         step(1, "isolate", sets="EB closed", lock=1),
         step(2, "release", sets="HB open", lock=2),
@@ -265,6 +297,25 @@ class TestLeast:
         add_line(plan, line("pilot", "air"), [7e5, 8e5])
         find(plan, "DV")["moved_by"] = ["hand", "pilot"]
         assert "run has no sure vent" in least(plan).evidence
+
+    def test_a_vent_behind_a_lock_that_a_dead_pilot_can_not_overcome_is_sure(self) -> None:
+        plan = small_plan()
+        add_line(plan, line("pilot", "air"))
+        find(plan, "DV")["moved_by"] = ["hand", "pilot"]
+        assert least(plan).holds
+
+    def test_a_vent_through_a_check_valve_is_no_sure_vent(self) -> None:
+        plan = small_plan()
+        find(plan, "DV")["positions"]["open"] = [way("run check tank")]
+        assert "run has no sure vent" in least(plan).evidence
+
+    @pytest.mark.parametrize("words", ["hose open tank", "tank open hose"])
+    def test_a_vent_may_be_several_passages_away(self, words: str) -> None:
+        plan = small_plan()
+        add_line(plan, line("hose"))
+        find(plan, "DV")["positions"]["open"] = [way("run open hose")]
+        add(plan, fixed("PP", way(words)))
+        assert least(plan).holds
 
     @pytest.mark.parametrize(
         ("change", "fault"),
@@ -337,6 +388,29 @@ class TestQuiet:
             plan["steps"] = [step(1, "prepare", sets="SV open")]
             assert quiet(plan).holds is calm
 
+    def test_a_regulator_that_is_backed_off_lets_no_live_source_out(self) -> None:
+        for set_pag, calm in ((0.0, True), (10e6, False)):
+            plan = small_plan()
+            find(plan, "SV")["positions"]["open"] = [way("header regulator run", set_pag)]
+            plan["network"]["initial"]["pressures_pag"] |= {"run": [0.0, 0.0], "closing": [0.0, 0.0]}
+            plan["steps"] = [step(1, "prepare", sets="DV open")]
+            assert quiet(plan).holds is calm
+
+    def test_it_does_not_matter_from_which_side_a_passage_is_written(self) -> None:
+        plan = small_plan()
+        find(plan, "SV")["positions"]["open"] = [way("run open header")]
+        plan["steps"] = [step(1, "prepare", sets="FW open")]
+        assert "ram travels to open" in quiet(plan).evidence
+
+    def test_a_blocked_in_line_does_not_push_a_piston(self) -> None:
+        plan = small_plan()
+        add_line(plan, line("pot"), [5e6, 5e6])
+        plan["network"]["sources"].append(bottles("pot", "pot") | {"gas": False})
+        add(plan, valve("PV", "pot", "opening"), "closed")
+        plan["network"]["initial"]["positions"] |= {"FW": "centre"}
+        plan["steps"] = [step(1, "prepare", sets="PV open")]
+        assert quiet(plan).holds
+
     def test_letting_go_of_one_side_moves_a_piston_that_was_pushed_from_both(self) -> None:
         plan = small_plan()
         add(plan, valve("XV", "run", "opening"), "open")
@@ -366,6 +440,13 @@ class TestQuiet:
         del plan["network"]["sources"][1]["senses"]
         plan["steps"] = [step(1, "isolate", sets="EB closed"), step(2, "reinstate", sets="EB open")]
         assert "in step s2 pump starts" in quiet(plan).evidence
+
+    def test_a_power_supply_that_comes_on_is_no_pump(self) -> None:
+        plan = small_plan()
+        add_line(plan, line("panel", "electric"))
+        plan["network"]["sources"].append(live("supply", "panel", [24.0, 24.0], "motor"))
+        plan["steps"] = [step(1, "isolate", sets="EB closed"), step(2, "reinstate", sets="EB open")]
+        assert quiet(plan).holds
 
     def test_a_live_source_let_out_to_a_vent_can_not_be_announced(self) -> None:
         plan = small_plan()
@@ -429,6 +510,21 @@ class TestHonest:
         plan["steps"][0]["expect"] = reads("stub", 0.0, 0.0)
         assert "stub is at [0, 20700000] Pa" in honest(plan).evidence
 
+    def test_no_tolerance_makes_a_zero(self) -> None:
+        plan = small_plan()
+        add_line(plan, line("pot"), [0.0, 0.1e6])
+        plan["steps"][0]["expect"] = [reads("pot", 0.0, 0.0)[0] | {"tolerance_pa": 0.2e6}]
+        assert "reads as zero" in honest(plan).evidence
+
+    @pytest.mark.parametrize(("low", "high"), [(0.0, 5e6), (1e6, 1.5e6)])
+    def test_a_band_that_nobody_takes_for_zero_only_has_to_be_wide_enough(
+        self, low: float, high: float
+    ) -> None:
+        plan = small_plan()
+        add_line(plan, line("pot"), [1.1e6, 1.4e6])
+        plan["steps"][0]["expect"] = reads("pot", low, high)
+        assert honest(plan).holds
+
     def test_readings_after_the_work_are_checked_too(self) -> None:
         plan = small_plan()
         plan["steps"][5]["expect"] = reads("run", 0.0, 0.0)
@@ -466,6 +562,12 @@ class TestReversible:
         add_line(plan, line("pot"), [5e6, 5e6])
         add(plan, valve("PV", "pot", "tank"), "closed")
         plan["steps"] += [step(7, "test", sets="PV open"), step(8, "test", sets="PV closed")]
+        assert reversible(plan).holds
+
+    def test_a_zone_filled_again_to_another_pressure_is_put_back(self) -> None:
+        plan = small_plan()
+        find(plan, "SV")["positions"]["open"] = [way("header regulator run", 10e6)]
+        plan["network"]["initial"]["pressures_pag"] |= {"run": [15e6, 15e6], "closing": [15e6, 15e6]}
         assert reversible(plan).holds
 
     def test_a_line_that_gained_pressure_is_told(self) -> None:

@@ -195,8 +195,8 @@ def _left(brief: Brief, lines: Sequence[LineId]) -> str:
 
 
 def _trapped(brief: Brief) -> list[tuple[Text, ...]]:
-    """One row for the lines that hold pressure of their own without being a source."""
-    sources = {s.line for s in brief.plan.network.sources}
+    """One row for the lines that hold pressure without being a store of it."""
+    sources = {s.line for s in brief.plan.network.sources if s.kind is SourceKind.STORED}
     start, lines = brief.plan.start(), brief.plan.network.lines
     held = [
         k

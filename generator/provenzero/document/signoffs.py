@@ -21,18 +21,20 @@ def recheck(brief: Brief) -> Table:
     interval = brief.say("recheck.interval_unknown") if seconds is None else brief.measure.duration(seconds)
     gauges = tuple(dict.fromkeys(e.gauge for s in brief.plan.steps for e in s.expect if s.reason == "zero_read"))
     shown = gauges[:_NAMED_GAUGES]
-    columns = [Column(title=brief.say("recheck.due"), percent=12), Column(title=brief.say("recheck.time"), percent=12)]
-    columns += [Column(title=brief.say("recheck.gauge", gauge=tag), percent=36 // max(len(shown), 1)) for tag in shown]
+    titles = [brief.say("recheck.gauge", gauge=tag) for tag in shown]
     if not shown or len(gauges) > len(shown):
-        columns.append(Column(title=brief.say("recheck.gauges"), percent=12))
-    columns += [
+        titles.append(brief.say("recheck.gauges"))
+    columns = (
+        Column(title=brief.say("recheck.due"), percent=12),
+        Column(title=brief.say("recheck.time"), percent=12),
+        *(Column(title=title, percent=48 // len(titles)) for title in titles),
         Column(title=brief.say("recheck.bleeds"), percent=14),
         Column(title=brief.say("recheck.by"), percent=14),
-    ]
+    )
     rows: tuple[tuple[Cell, ...], ...] = tuple((Blank(),) * len(columns) for _ in range(_RECHECKS))
     return Table(
         title=brief.say("recheck.title"),
-        columns=tuple(columns),
+        columns=columns,
         rows=rows,
         before=(brief.say("recheck.before", interval=interval),),
     )

@@ -1,18 +1,18 @@
 """The whole circuit on as few sheets as it needs.
 
-The rules, in this order. Everything that makes or stores pressure stands left of a corridor, from the foot up: reservoir,
-pumps, header, banks, nitrogen, air, panels. Everything that spends it stands right, from the top down: regulators with
-their bypasses, then the functions in the order of the description. Each piece is a row that reads from left to right;
-the lines that rows share run up and down in the corridor. What does not fit goes on to the next sheet, where the same
-shared lines stand again under the same letters; sheets with functions alone carry two corridors.
+The rules, in this order. What makes or stores pressure stands left of a corridor, from the foot up: reservoir, pumps,
+header, banks, nitrogen, air, panels. What spends it stands right, from the top down: regulators with their bypasses, then
+the functions in the order of the description. Each piece is a row that reads from left to right; the lines that rows share
+run up and down in the corridor. What does not fit goes on to the next sheet, where the shared lines stand again under
+the same letters; sheets with functions alone carry two corridors.
 """
 
 from collections.abc import Sequence
 from dataclasses import dataclass
 
-from provenzero.drawing.alternative import alternative
+from provenzero.drawing.alternative import alternative, title
 from provenzero.drawing.banks import bank_block, header_block
-from provenzero.drawing.block import Block
+from provenzero.drawing.block import Block, shelves
 from provenzero.drawing.canvas import Canvas
 from provenzero.drawing.functions import function_block
 from provenzero.drawing.legend import legend_block
@@ -22,7 +22,7 @@ from provenzero.drawing.pumps import pump_block
 from provenzero.drawing.regulators import bypass_block, regulator_block
 from provenzero.drawing.remote import air_block, backup_block, panel_block
 from provenzero.drawing.reservoir import reservoir_block
-from provenzero.drawing.route import corridor, draw_corridor, raised, stacked, vertical, width_of
+from provenzero.drawing.route import Placed, corridor, draw_corridor, raised, stacked, vertical, width_of
 from provenzero.drawing.scene import AIR, Scene, letters_of
 from provenzero.drawing.wording import ENGLISH, Wording
 from provenzero.network.devices.pumps import LIQUID
@@ -31,3 +31,161 @@ from provenzero.unit.model import ATMOSPHERE, HEADER, RESERVOIR, RETURNS, Unit
 
 WIDTH_MM = 190.0
 HEIGHT_MM = 250.0
+_SUCTION_AT = 2.2
+_LEFT_AT = 4.6
+_GAP = 1.4
+_TOP = 1.0
+_LEAST_TAP = 5.0
+_SHELF_GAP = 5.0
+_NARROWEST = 84.0
+
+
+@dataclass(frozen=True, slots=True)
+class _Sheet:
+    left: tuple[Block, ...]
+    panes: tuple[tuple[Block, ...], ...]
+
+
+def overview(unit: Unit, network: Network, marks: Marks, wording: Wording = ENGLISH) -> tuple[Drawing, ...]:
+    """Draw a unit with its marks, each device once, on sheets of at most 190 by 250 mm."""
+    scene = Scene(unit=unit, network=network, marks=marks, wording=wording, letters=letters_of(unit))
+    silent = frozenset({*scene.letters, AIR, LineId(RESERVOIR), LineId(ATMOSPHERE)})
+    right = _right(scene, silent)
+    spent = max((block.width for block in right), default=0.0)
+    limit = max(WIDTH_MM - _LEFT_AT - width_of(_shared(unit)) - spent, _NARROWEST)
+    left = _left(scene, limit, silent)
+    sheets = _divide(scene, left, right)
+    return tuple(_draw(scene, sheet, number, len(sheets)) for number, sheet in enumerate(sheets, start=1))
+
+
+def _shared(unit: Unit) -> list[LineId]:
+    """The lines of the corridor: header, pressure lines by the number of functions they feed, return header."""
+    fed = [item.fed_from for item in unit.functions]
+    serves = list(dict.fromkeys(item.serves for item in unit.regulators))
+    serves.sort(key=fed.count)
+    names = [HEADER, *serves, *((RETURNS,) if unit.common_returns else ())]
+    return [LineId(name) for name in names]
+
+
+def _right(scene: Scene, silent: frozenset[LineId]) -> list[Block]:
+    blocks = []
+    left = list(scene.unit.bypasses)
+    for item in scene.unit.regulators:
+        blocks.append(regulator_block(scene, item, WIDTH_MM / 2, silent))
+        for link in [link for link in left if link.around == item.tag]:
+            blocks.append(bypass_block(scene, link, WIDTH_MM / 2, silent))
+            left.remove(link)
+    blocks += [bypass_block(scene, link, WIDTH_MM / 2, silent) for link in left]
+    blocks += [function_block(scene, item, WIDTH_MM / 4, silent) for item in scene.unit.functions]
+    return blocks
+
+
+def _left(scene: Scene, limit: float, silent: frozenset[LineId]) -> list[Block]:
+    unit = scene.unit
+    chambers = {f"{item.name}.{side}" for item in unit.functions for side in ("open", "close")}
+    pumps = [pump_block(scene, item, limit, silent) for item in unit.pumps]
+    banks = [bank_block(scene, item, limit, silent) for item in unit.banks if item.attached_to not in chambers]
+    backups = [backup_block(scene, item, limit, silent) for item in unit.nitrogen_backups]
+    air = [] if unit.air is None else [air_block(scene, unit.air, limit, silent)]
+    panels = shelves([panel_block(scene, item) for item in unit.panels], limit, _SHELF_GAP)
+    others = [*pumps, header_block(scene, limit, silent), *banks, *backups, *air, *panels]
+    wide = max(block.width for block in others)
+    return [reservoir_block(scene, unit.reservoir, wide, silent), *others]
+
+
+def _divide(scene: Scene, left: Sequence[Block], right: Sequence[Block]) -> list[_Sheet]:
+    whole = _Sheet(tuple(left), (tuple(right),) if right else ())
+    if _width(scene, whole) <= WIDTH_MM and _height(scene, whole, "") <= HEIGHT_MM:
+        return [whole]
+    sheets = []
+    makers, spenders = list(left), list(right)
+    while makers or spenders:
+        first = _taken(scene, makers, _Sheet((), ()), into_left=True)
+        del makers[: len(first.left)]
+        sheet = first
+        for _ in range(2):
+            more = _taken(scene, spenders, sheet, into_left=False)
+            if more == sheet:
+                break
+            del spenders[: len(more.panes[-1])]
+            sheet = more
+        sheets.append(sheet)
+    return sheets
+
+
+def _taken(scene: Scene, blocks: Sequence[Block], sheet: _Sheet, *, into_left: bool) -> _Sheet:
+    """The sheet with as many more blocks as fit, in a new column; at least one on an empty sheet."""
+    best = sheet
+    for count in range(1, len(blocks) + 1):
+        some = tuple(blocks[:count])
+        tried = _Sheet(some, ()) if into_left else _Sheet(sheet.left, (*sheet.panes, some))
+        fits = _width(scene, tried) <= WIDTH_MM and _height(scene, tried, "-") <= HEIGHT_MM
+        if not fits and (count > 1 or sheet != _Sheet((), ())):
+            break
+        best = tried
+    return best
+
+
+def _column(blocks: Sequence[Block]) -> float:
+    return max((block.width for block in blocks), default=0.0)
+
+
+def _stack(blocks: Sequence[Block]) -> float:
+    return sum(block.height + _GAP for block in blocks)
+
+
+def _lines_of(scene: Scene, left: Sequence[Block], right: Sequence[Block]) -> list[LineId]:
+    used = {tap.line for block in left for tap in block.right} | {tap.line for block in right for tap in block.left}
+    shared = _shared(scene.unit)
+    return [line for line in shared if line in used]
+
+
+def _width(scene: Scene, sheet: _Sheet) -> float:
+    left = _LEFT_AT + _column(sheet.left) if sheet.left else 0.0
+    panes = sheet.panes or ((),)
+    return left + sum(
+        width_of(_lines_of(scene, sheet.left if number == 0 else (), pane)) + _column(pane) + (_GAP if number else 0.0)
+        for number, pane in enumerate(panes)
+    )
+
+
+def _height(scene: Scene, sheet: _Sheet, number: str) -> float:
+    body = max(_stack(sheet.left) + _TOP, *(_stack(pane) + _top(pane) for pane in sheet.panes), 0.0)
+    return body + legend_block(scene, _width(scene, sheet), number).height
+
+
+def _top(pane: Sequence[Block]) -> float:
+    """Where a column begins, so that no line of it meets the rings at the head of the corridor."""
+    if not pane:
+        return _TOP
+    first = pane[0]
+    return max(_TOP, _LEAST_TAP - first.up - min((tap.offset for tap in first.left), default=0.0))
+
+
+def _draw(scene: Scene, sheet: _Sheet, number: int, count: int) -> Drawing:
+    canvas = Canvas(scene.marks.lines)
+    width = _width(scene, sheet)
+    words = scene.wording.sheet.format(number=number, count=count) if count > 1 else ""
+    legend = legend_block(scene, width, words)
+    x = _LEFT_AT + _column(sheet.left) if sheet.left else 0.0
+    foot = 0.0
+    panes = sheet.panes or ((),)
+    for place, pane in enumerate(panes):
+        makers = sheet.left if place == 0 else ()
+        lines = _lines_of(scene, makers, pane)
+        way = corridor(lines, x)
+        spent = stacked(pane, way.right, _top(pane), _GAP)
+        made = _settled(makers, spent, way, max(_stack(makers) + _TOP, _stack(pane) + _top(pane)))
+        _put(canvas, made, way.left)
+        _put(canvas, spent, 0.0)
+        ringed = frozenset(lines) if count > 1 else frozenset({LineId(RETURNS)})
+        draw_corridor(canvas, scene, way, made, spent, ringed)
+        _suction(canvas, scene, made, ringed=count > 1)
+        foot = max([foot, *(item.y + item.block.down + _GAP for item in (*made, *spent))])
+        x = way.right + _column(pane) + _GAP
+    legend.draw(canvas, 0.0, foot, 0.0)
+    shown = [name for block in (*sheet.left, *(b for pane in panes for b in pane)) for name in block.names]
+    return Drawing(
+        width_mm=round(width, 2), height_mm=round(foot + legend.height, 2), title=title(scene, number, count),
+        alt=alternative(scene, number, count, shown), groups=canvas.groups(),
+    )

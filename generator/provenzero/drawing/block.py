@@ -31,3 +31,26 @@ class Block:
     def height(self) -> float:
         """Height [mm]."""
         return self.up + self.down
+
+
+def shelves(blocks: list[Block], limit_mm: float, gap: float) -> list[Block]:
+    """Blocks that tap nothing, side by side as far as the width allows."""
+    rows: list[list[Block]] = []
+    for block in blocks:
+        if rows and sum(b.width + gap for b in rows[-1]) + block.width <= limit_mm:
+            rows[-1].append(block)
+        else:
+            rows.append([block])
+    return [_shelf(row, gap) for row in rows]
+
+
+def _shelf(row: list[Block], gap: float) -> Block:
+    def draw(canvas: Canvas, x: float, y: float, end: float) -> None:
+        for block in row:
+            block.draw(canvas, x, y, end)
+            x += block.width + gap
+
+    return Block(
+        names=tuple(name for block in row for name in block.names), width=sum(b.width + gap for b in row) - gap,
+        up=max(b.up for b in row), down=max(b.down for b in row), draw=draw,
+    )

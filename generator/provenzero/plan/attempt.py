@@ -5,7 +5,7 @@ from collections.abc import Iterable, Mapping
 from dataclasses import dataclass, replace
 
 from provenzero.failure.single import exposed
-from provenzero.network.model import DeviceTag, LineId, Medium
+from provenzero.network.model import DeviceKind, DeviceTag, LineId, Medium
 from provenzero.plan.hold import Holding, hold_open, way_out
 from provenzero.plan.impairment import Loss, loss
 from provenzero.plan.model import Obstacle, Purpose
@@ -194,6 +194,11 @@ def _targets(wiring: Wiring, state: State, zone: frozenset[LineId], region: Regi
         and lines[k].medium in {Medium.CONTROL_FLUID, Medium.AIR}
     ]
     return sorted(wanted, key=lambda k: k not in zone)
+
+
+def _behind_bottle_valve(wiring: Wiring, line: LineId) -> bool:
+    devices = [wiring.device(tag) for tag in wiring.touching[line]]
+    return len(devices) == 1 and devices[0].kind is DeviceKind.BOTTLE_VALVE
 
 
 def _weak(

@@ -1,13 +1,14 @@
 """Which lines must be dead so that the zone is: the zone, and all that nothing lockable can keep from it.
 
 A device on the edge of the dead region is locked in a position that separates the two sides. Where it cannot be, or
-where the far side holds nothing but liquid that empties with the rest, the region takes the far side in.
+where the far side holds nothing but liquid (or one bottle) that empties with the rest, the region takes the far side
+in.
 """
 
 from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
 
-from provenzero.network.model import FULL_OPEN, Device, DeviceTag, LineId, SourceKind
+from provenzero.network.model import FULL_OPEN, Device, DeviceKind, DeviceTag, LineId, SourceKind
 from provenzero.plan.model import Obstacle
 from provenzero.state.may import Reach, reach
 from provenzero.state.model import State, Wiring
@@ -29,8 +30,10 @@ def enclose(wiring: Wiring, state: State, seed: Iterable[LineId], *, take_in: bo
     while True:
         outside = reach(wiring, {}, state.pressures, walls=frozenset(dead))
         barriers, beyond = _edge(wiring, state, dead, outside, take_in=take_in)
-        wanted = beyond | _drives(wiring, dead) | _pilots(wiring, barriers, outside)
-        if wanted <= dead:
+        wanted = (beyond | _drives(wiring, dead)) - dead
+        # Pilots last: a barrier of a narrower region may be none of the final one.
+        wanted = wanted or _pilots(wiring, barriers, outside) - dead
+        if not wanted:
             return Region(
                 dead=frozenset(dead), barriers=barriers, outside=outside, obstacles=_live_inside(wiring, dead)
             )
@@ -64,7 +67,8 @@ def _edge(
         if not far:
             continue
         position = _separating(wiring, state, tag, dead, far)
-        if position is None or (take_in and not _energetic(wiring, state, far, dead)):
+        bottle = wiring.device(tag).kind is DeviceKind.BOTTLE_VALVE
+        if position is None or (take_in and (bottle or not _energetic(wiring, state, far, dead))):
             beyond |= far
         else:
             barriers[tag] = position

@@ -18,9 +18,9 @@ def write_atomically(path: Path, content: bytes) -> Finding | None:
     The bytes go to a file beside the target, are forced to the disk, and take its name last. A target
     that is a link stays one: what it leads to is replaced.
     """
-    target = Path(os.path.realpath(path))
     part: Path | None = None
     try:
+        target = Path(os.path.realpath(path))
         if target.is_dir():
             return _finding(path, "a folder of that name", "the path of a file")
         part = _part(target)

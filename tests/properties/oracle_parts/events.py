@@ -37,7 +37,7 @@ def events(walked: Walk) -> Iterator[Event]:
             continue
         after = look(circuit, moment.before, moment.after)
         for name, end in after.pushed.items():
-            if before.pushed.get(name) != end and stands[name] != end:
+            if stands[name] != end:
                 text = f"{name} travels to {end}"
                 yield Event(moment=moment, text=text, announced=moment.step.get("moves_function") == name)
             stands[name] = end
@@ -107,7 +107,7 @@ def _downstream(circuit: Circuit, flows: Flows, begin: set[int], pressure: float
 def _supplied(circuit: Circuit, state: State, flows: Flows, running: list[Source]) -> frozenset[int]:
     high = state.pressures.high
     begin = {s.line for s in running}
-    begin |= {s.line for s in circuit.sources if s.gas and not s.live and high[s.line] > 0}
+    begin |= {s.line for s in circuit.sources if s.gas and high[s.line] > 0}
     return frozenset(k for k in _downstream(circuit, flows, begin, 0.0) if high[k] > 0)
 
 

@@ -60,7 +60,7 @@ def origins(circuit: Circuit, state: State) -> dict[int, str]:
     found: dict[int, str] = {}
     for line in range(len(circuit.ids)):
         held = state.pressures.high[line]
-        if held > circuit.head_pag[line] and not circuit.vent[line]:
+        if held > circuit.head_pag[line]:
             found[line] = f"(holds up to {held:.0f} Pa)"
     for source in circuit.sources:
         if not source.live and state.pressures.high[source.line] > 0:

@@ -23,10 +23,8 @@ def untrue_readings(walked: Walk) -> Iterator[str]:
             margin = ROUNDING_PA + float(reading.get("tolerance_pa") or 0.0)
             said = f"{moment.name} promises [{least:.0f}, {most:.0f}] Pa on {reading['gauge']}"
             low, high = pressures.low[line], pressures.high[line]
-            says_zero = least <= 0 and most < LOW_BAND_FRACTION * highest.get(circuit.medium[line], 0.0)
-            if most <= 0 or says_zero:
-                margin = min(margin, ROUNDING_PA)
-                if high > circuit.head_pag[line] + margin:
+            if least <= 0 and most <= LOW_BAND_FRACTION * highest[circuit.medium[line]]:
+                if high > circuit.head_pag[line] + ROUNDING_PA:
                     yield f"{said}, which reads as zero, and {circuit.ids[line]} is at {pressures.text(line)}"
             elif low < least - margin or high > most + margin:
                 yield f"{said}, and {circuit.ids[line]} is at {pressures.text(line)}"

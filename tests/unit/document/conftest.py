@@ -5,6 +5,7 @@ from dataclasses import replace
 import pytest
 
 from provenzero.catalogue.job import Equipment, Job, Leave, TestKind
+from provenzero.document.brief import Brief
 from provenzero.document.context import PermitContext
 from provenzero.document.figures import BankFigures, PermitFigures, StepFigures, TrappedFigures
 from provenzero.document.model import Paper
@@ -641,3 +642,10 @@ def figures() -> PermitFigures:
         ),
         trapped=(TrappedFigures(line="ram.open", volume_m3=0.002),),
     )
+
+
+@pytest.fixture
+def brief(
+    plan: Plan, figures: PermitFigures, proof: dict[str, Verdict], context: PermitContext, wording: Wording
+) -> Brief:
+    return Brief(plan=plan, figures=figures, proof=proof, context=context, wording=wording)

@@ -5,7 +5,7 @@ from dataclasses import replace
 
 import pytest
 
-from provenzero.document.context import PermitContext
+from provenzero.document.brief import Brief
 from provenzero.document.figures import PermitFigures
 from provenzero.document.model import (
     Blank,
@@ -22,18 +22,20 @@ from provenzero.document.model import (
     Words,
 )
 from provenzero.document.permit import permit
-from provenzero.document.wording import Wording
 from provenzero.network.model import LineId
 from provenzero.plan.model import Plan, Verdict
 from provenzero.unit.model import Verification
 
 NB = "\u00a0"
-Proof = dict[str, Verdict]
 
 
 @pytest.fixture
-def document(plan: Plan, figures: PermitFigures, proof: Proof, context: PermitContext, wording: Wording) -> Document:
-    return permit(plan, figures, proof, context, wording)
+def document(brief: Brief) -> Document:
+    return made(brief)
+
+
+def made(brief: Brief) -> Document:
+    return permit(brief.plan, brief.figures, brief.proof, brief.context, brief.wording)
 
 
 def cards(document: Document) -> dict[str, StepCard]:
@@ -166,10 +168,8 @@ def test_watching_zero_takes_the_time_of_the_site(document: Document) -> None:
     assert cards(document)["D4"].action == f"Watch all these gauges for 15{NB}min."
 
 
-def test_without_a_hold_time_the_site_is_asked_for_it(
-    plan: Plan, figures: PermitFigures, proof: Proof, context: PermitContext, wording: Wording
-) -> None:
-    document = permit(plan, figures, proof, replace(context, hold_s=None), wording)
+def test_without_a_hold_time_the_site_is_asked_for_it(brief: Brief) -> None:
+    document = made(replace(brief, context=replace(brief.context, hold_s=None)))
     assert cards(document)["D4"].action == "Watch all these gauges for the hold time of the site."
     assert "Hold time" in cards(document)["D4"].asks
 
@@ -183,23 +183,19 @@ def test_every_source_is_in_the_energy_table_with_gas_and_fluid_apart(document: 
     assert row(energy, "Trapped in: accumulator header")[4:] == ["Let out; lock 3 keeps it open", "zero"]
 
 
-def test_a_source_that_nothing_is_shown_to_keep_away_is_said_to_be_so(
-    plan: Plan, figures: PermitFigures, proof: Proof, context: PermitContext, wording: Wording
-) -> None:
-    open_plan = replace(plan, grades=(), locks=plan.locks[2:])
-    unproven = {**proof, "locked": Verdict(holds=False, evidence="a way in")}
-    document = permit(open_plan, figures, unproven, context, wording)
+def test_a_source_that_nothing_is_shown_to_keep_away_is_said_to_be_so(brief: Brief) -> None:
+    open_plan = replace(brief.plan, grades=(), locks=brief.plan.locks[2:])
+    unproven = {**brief.proof, "locked": Verdict(holds=False, evidence="a way in")}
+    document = made(replace(brief, plan=open_plan, proof=unproven))
     assert row(table(document, "Energy"), "Bank B-1, fluid side")[4].startswith("NOT SHOWN")
 
 
-def test_drained_nitrogen_that_stays_is_at_its_precharge(
-    plan: Plan, figures: PermitFigures, proof: Proof, context: PermitContext, wording: Wording
-) -> None:
+def test_drained_nitrogen_that_stays_is_at_its_precharge(brief: Brief) -> None:
     states = tuple(
         replace(s, pressures={**s.pressures, LineId("B-1.fluid"): (0.0, 0.0)}) if place else s
-        for place, s in enumerate(plan.states)
+        for place, s in enumerate(brief.plan.states)
     )
-    document = permit(replace(plan, states=states), figures, proof, context, wording)
+    document = made(replace(brief, plan=replace(brief.plan, states=states)))
     found = row(table(document, "Energy"), "Nitrogen of bank B-1")
     assert found[5] == f"precharge, 900 to 1000{NB}psi"
 
@@ -213,12 +209,10 @@ def test_zero_is_shown_twice_for_each_group_of_lines(document: Document) -> None
     assert (power[1], power[3]) == ("try-start (step B2): no start", "voltage tester: 0 V")
 
 
-def test_a_line_that_nothing_shows_is_said_to_be_unshown(
-    plan: Plan, figures: PermitFigures, proof: Proof, context: PermitContext, wording: Wording
-) -> None:
-    steps = tuple(s for s in plan.steps if s.id not in ("D2", "D3", "B2"))
-    states = plan.states[: len(steps) + 1]
-    document = permit(replace(plan, steps=steps, states=states), figures, proof, context, wording)
+def test_a_line_that_nothing_shows_is_said_to_be_unshown(brief: Brief) -> None:
+    steps = tuple(s for s in brief.plan.steps if s.id not in ("D2", "D3", "B2"))
+    states = brief.plan.states[: len(steps) + 1]
+    document = made(replace(brief, plan=replace(brief.plan, steps=steps, states=states)))
     found = row(table(document, "Zero, shown twice"), "accumulator header")
     assert (found[1], found[3]) == ("NONE on this unit", "NONE on this unit")
 
@@ -234,32 +228,26 @@ def test_an_unverified_description_is_marked_and_warned_of(document: Document) -
     assert any("nobody has checked" in n.title for n in notices(document))
 
 
-def test_a_verified_description_is_not_marked(
-    plan: Plan, figures: PermitFigures, proof: Proof, context: PermitContext, wording: Wording
-) -> None:
-    seen = replace(plan.unit.description, verification=Verification(by="A. Walker", on="2026-02-01"))
-    checked = replace(plan, unit=replace(plan.unit, description=seen))
-    document = permit(checked, figures, proof, context, wording)
+def test_a_verified_description_is_not_marked(brief: Brief) -> None:
+    seen = replace(brief.plan.unit.description, verification=Verification(by="A. Walker", on="2026-02-01"))
+    checked = replace(brief.plan, unit=replace(brief.plan.unit, description=seen))
+    document = made(replace(brief, plan=checked))
     assert document.identity.marks == ()
     assert "by A. Walker on 2026-02-01" in set(words(document))
 
 
 @pytest.mark.parametrize("missing", ["locked", "honest"])
-def test_a_property_that_was_not_shown_marks_every_page(
-    missing: str, plan: Plan, figures: PermitFigures, proof: Proof, context: PermitContext, wording: Wording
-) -> None:
-    partial = {k: v for k, v in proof.items() if k != missing}
-    document = permit(plan, figures, partial, context, wording)
+def test_a_property_that_was_not_shown_marks_every_page(missing: str, brief: Brief) -> None:
+    partial = {k: v for k, v in brief.proof.items() if k != missing}
+    document = made(replace(brief, proof=partial))
     assert f"NOT PROVEN: {missing.capitalize()}" in document.identity.marks
     assert any(n.signal is Signal.DANGER for n in notices(document))
     assert row(table(document, "Properties"), missing.capitalize())[2] == "NOT CHECKED"
 
 
-def test_a_property_that_fails_is_printed_as_failing(
-    plan: Plan, figures: PermitFigures, proof: Proof, context: PermitContext, wording: Wording
-) -> None:
-    failing = {**proof, "dead": Verdict(holds=False, evidence="header may hold 3 psi")}
-    document = permit(plan, figures, failing, context, wording)
+def test_a_property_that_fails_is_printed_as_failing(brief: Brief) -> None:
+    failing = {**brief.proof, "dead": Verdict(holds=False, evidence="header may hold 3 psi")}
+    document = made(replace(brief, proof=failing))
     assert row(table(document, "Properties"), "Dead")[2:] == ["DOES NOT HOLD", "header may hold 3 psi"]
 
 
@@ -272,28 +260,22 @@ def test_a_single_leak_that_reaches_the_work_is_warned_of_at_the_start(document:
     assert any(isinstance(b, Notice) and "leaking barrier" in b.title and "Q-1" in b.lines[0] for b in first.blocks)
 
 
-def test_an_unheld_vent_is_warned_of_and_listed(
-    plan: Plan, figures: PermitFigures, proof: Proof, context: PermitContext, wording: Wording
-) -> None:
-    document = permit(replace(plan, unheld=(LineId("ram.close"),)), figures, proof, context, wording)
+def test_an_unheld_vent_is_warned_of_and_listed(brief: Brief) -> None:
+    document = made(replace(brief, plan=replace(brief.plan, unheld=(LineId("ram.close"),))))
     assert any("cannot be locked" in n.title for n in notices(document))
     assert any("Pipe ram, closing line: its vent cannot be locked" in text for text in words(document))
 
 
-def test_figures_that_nobody_computed_are_not_known_and_never_zero(
-    plan: Plan, proof: Proof, context: PermitContext, wording: Wording
-) -> None:
-    document = permit(plan, PermitFigures(), proof, context, wording)
+def test_figures_that_nobody_computed_are_not_known_and_never_zero(brief: Brief) -> None:
+    document = made(replace(brief, figures=PermitFigures()))
     for what in ("Fluid that returns", "Room in the reservoir", "Charging time", "Temperature"):
         assert row(table(document, "Computed figures"), what)[1] == "not known"
     assert row(table(document, "Energy"), "Bank B-1, fluid side")[2].endswith("stored energy not known")
     assert cards(document)["C1"].figures == ()
 
 
-def test_fluid_that_the_reservoir_cannot_take_is_warned_of(
-    plan: Plan, figures: PermitFigures, proof: Proof, context: PermitContext, wording: Wording
-) -> None:
-    document = permit(plan, replace(figures, reservoir_room_m3=0.011), proof, context, wording)
+def test_fluid_that_the_reservoir_cannot_take_is_warned_of(brief: Brief) -> None:
+    document = made(replace(brief, figures=replace(brief.figures, reservoir_room_m3=0.011)))
     assert any("reservoir cannot take" in n.title for n in notices(document))
 
 
@@ -334,10 +316,8 @@ def test_columns_share_the_whole_width(document: Document) -> None:
                 assert all(len(cells) == len(block.columns) for cells in block.rows), block.title
 
 
-def test_the_same_input_gives_the_same_document(
-    document: Document, plan: Plan, figures: PermitFigures, proof: Proof, context: PermitContext, wording: Wording
-) -> None:
-    assert document == permit(plan, figures, dict(reversed(proof.items())), context, wording)
+def test_the_same_input_gives_the_same_document(document: Document, brief: Brief) -> None:
+    assert document == made(replace(brief, proof=dict(reversed(brief.proof.items()))))
 
 
 def test_the_fingerprint_is_grouped_in_fours(document: Document) -> None:

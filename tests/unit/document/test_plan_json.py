@@ -5,43 +5,42 @@ from dataclasses import replace
 from types import MappingProxyType
 
 import pytest
-from jsonschema import Draft202012Validator
 
-from provenzero.document.context import PermitContext
-from provenzero.document.figures import PermitFigures
+from provenzero.document.brief import Brief
 from provenzero.document.plan_json import plan_json
-from provenzero.document.wording import Wording
-from provenzero.plan.model import Plan, Verdict
+from provenzero.plan.model import Plan
 from provenzero.resources import schemas
 
-Proof = dict[str, Verdict]
+jsonschema = pytest.importorskip("jsonschema")
 SCHEMA = json.loads(schemas().joinpath("plan.schema.json").read_text(encoding="utf-8"))
 
 
 @pytest.fixture
-def text(plan: Plan, proof: Proof, figures: PermitFigures, context: PermitContext, wording: Wording) -> str:
-    return plan_json(plan, proof, figures, context, wording)
+def text(brief: Brief) -> str:
+    return made(brief)
+
+
+def made(brief: Brief) -> str:
+    return plan_json(brief.plan, brief.proof, brief.figures, brief.context, brief.wording)
 
 
 def test_the_schema_is_sound() -> None:
-    Draft202012Validator.check_schema(SCHEMA)
+    jsonschema.Draft202012Validator.check_schema(SCHEMA)
 
 
 def test_the_file_is_valid(text: str) -> None:
-    assert not list(Draft202012Validator(SCHEMA).iter_errors(json.loads(text)))
+    assert not list(jsonschema.Draft202012Validator(SCHEMA).iter_errors(json.loads(text)))
 
 
 @pytest.mark.parametrize("name", ["zone", "network", "proof", "locks", "open_to_vent", "inputs"])
 def test_a_file_without_a_part_of_the_contract_is_not_valid(name: str, text: str) -> None:
     data = json.loads(text)
     del data[name]
-    assert list(Draft202012Validator(SCHEMA).iter_errors(data))
+    assert list(jsonschema.Draft202012Validator(SCHEMA).iter_errors(data))
 
 
-def test_the_same_input_gives_the_same_bytes(
-    text: str, plan: Plan, proof: Proof, figures: PermitFigures, context: PermitContext, wording: Wording
-) -> None:
-    assert text == plan_json(plan, dict(reversed(proof.items())), figures, context, wording)
+def test_the_same_input_gives_the_same_bytes(text: str, brief: Brief) -> None:
+    assert text == made(replace(brief, proof=dict(reversed(brief.proof.items()))))
 
 
 def test_the_network_is_whole(text: str, plan: Plan) -> None:
@@ -94,15 +93,11 @@ def test_a_figure_that_is_not_known_is_null(text: str) -> None:
     assert figures["steps"]["C1"]["returned_m3"] == [0.010, 0.012]
 
 
-def test_figures_may_come_in_any_kind_of_mapping(
-    text: str, plan: Plan, proof: Proof, figures: PermitFigures, context: PermitContext, wording: Wording
-) -> None:
-    frozen = replace(figures, steps=MappingProxyType(dict(figures.steps)))
-    assert plan_json(plan, proof, frozen, context, wording) == text
+def test_figures_may_come_in_any_kind_of_mapping(text: str, brief: Brief) -> None:
+    frozen = replace(brief.figures, steps=MappingProxyType(dict(brief.figures.steps)))
+    assert made(replace(brief, figures=frozen)) == text
 
 
-def test_a_figure_that_is_not_finite_is_a_fault(
-    plan: Plan, proof: Proof, figures: PermitFigures, context: PermitContext, wording: Wording
-) -> None:
+def test_a_figure_that_is_not_finite_is_a_fault(brief: Brief) -> None:
     with pytest.raises(ValueError, match="JSON"):
-        plan_json(plan, proof, replace(figures, reservoir_room_m3=float("inf")), context, wording)
+        made(replace(brief, figures=replace(brief.figures, reservoir_room_m3=float("inf"))))

@@ -22,7 +22,7 @@ STEP_FACTS = {
 }  # fmt: skip
 VERBS = {
     "Back", "Charge", "Check", "Clear", "Close", "Compare", "Fill", "Fit", "Leave", "Let", "Look", "Open", "Operate",
-    "Put", "Read", "Set", "Sign", "Switch", "Take", "Tell", "Try", "Watch",
+    "Put", "Read", "Set", "Sign", "Switch", "Take", "Tell", "Try", "Watch", "Work",
 }  # fmt: skip
 CONDITION = re.compile(r"^When [^,]+, (\w)")
 TEXTS = {k: v for k, v in WORDS.texts.items() if re.fullmatch(r"step\.\w+\.text|act\.\w+(\.\w+)?", k)} | {
