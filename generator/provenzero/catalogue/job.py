@@ -47,13 +47,17 @@ class Condition:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Job:
-    """One kind of work on one kind of equipment. `opens` names the ports that will be open to the air."""
+    """One kind of work on one kind of equipment.
+
+    `opens` names the ports that will be open to the air; those in `optional` only where there are such ports.
+    """
 
     id: str
     title: str
     equipment: Equipment
     conditions: tuple[Condition, ...]
     opens: tuple[str, ...]
+    optional: tuple[str, ...] = ()
     leave: Leave
     limits: tuple[str, ...]
     hazards: tuple[str, ...]

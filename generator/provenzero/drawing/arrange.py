@@ -22,7 +22,7 @@ from provenzero.drawing.pumps import pump_block
 from provenzero.drawing.regulators import bypass_block, regulator_block
 from provenzero.drawing.remote import air_block, backup_block, panel_block
 from provenzero.drawing.reservoir import reservoir_block
-from provenzero.drawing.route import Placed, corridor, draw_corridor, raised, stacked, vertical, width_of
+from provenzero.drawing.route import Corridor, Placed, corridor, draw_corridor, raised, stacked, vertical, width_of
 from provenzero.drawing.scene import AIR, Scene, letters_of
 from provenzero.drawing.wording import ENGLISH, Wording
 from provenzero.network.devices.pumps import LIQUID
@@ -189,3 +189,28 @@ def _draw(scene: Scene, sheet: _Sheet, number: int, count: int) -> Drawing:
         width_mm=round(width, 2), height_mm=round(foot + legend.height, 2), title=title(scene, number, count),
         alt=alternative(scene, number, count, shown), groups=canvas.groups(),
     )
+
+
+def _settled(makers: Sequence[Block], spent: Sequence[Placed], way: Corridor, bottom: float) -> list[Placed]:
+    """The left column on its foot; the foot goes down as far as the lines of the right column push the blocks up."""
+    while True:
+        placed = raised(makers, _LEFT_AT, bottom, _GAP, spent, way)
+        short = _TOP - min((item.y - item.block.up for item in placed), default=_TOP)
+        if short <= 0.0:
+            return placed
+        bottom += short
+
+
+def _put(canvas: Canvas, placed: Sequence[Placed], end: float) -> None:
+    for item in placed:
+        item.block.draw(canvas, item.x, item.y, end)
+
+
+def _suction(canvas: Canvas, scene: Scene, made: Sequence[Placed], *, ringed: bool) -> None:
+    heights = []
+    for item in made:
+        for tap in item.block.left:
+            heights.append(item.y + tap.offset)
+            canvas.wire(tap.line, (_SUCTION_AT, heights[-1]), (_LEFT_AT, heights[-1]))
+    ring_at = max(_SUCTION_AT, min(heights) - 5.0) if ringed and heights else None
+    vertical(canvas, scene, LIQUID, _SUCTION_AT, heights, ring_at=ring_at)

@@ -179,10 +179,17 @@ def isolate(wiring: Wiring, state: State, zone: frozenset[LineId], region: Regio
 def _targets(wiring: Wiring, state: State, zone: frozenset[LineId], region: Region) -> list[LineId]:
     """Lines whose vent a lock should hold.
 
-    Where a barrier could leak into the region, emptied gas-loaded lines (they can rebuild some pressure), and pilots
-    that must stay dead.
+    Where a barrier could leak into the region, emptied banks (they can rebuild some pressure), and pilots that must
+    stay dead. A single bottle behind its own valve lets out through its bank.
     """
-    emptied = {s.line for s in wiring.network.sources if s.gas and s.line in region.dead and state.high(s.line) > 0.0}
+    emptied = {
+        _bank_side(wiring, s.line)
+        for s in wiring.network.sources
+        if s.gas
+        and s.line in region.dead
+        and state.high(s.line) > 0.0
+        and wiring.network.lines[s.line].medium is Medium.CONTROL_FLUID
+    }
     pilots = {line for tag in region.barriers for line in unheld_movers(wiring.device(tag))}
     edge = {line for tag in region.barriers for line in wiring.anywhere[tag] if line in region.dead}
     lines = wiring.network.lines
@@ -191,14 +198,17 @@ def _targets(wiring: Wiring, state: State, zone: frozenset[LineId], region: Regi
         for k in lines
         if k in (emptied | pilots | edge) & region.dead
         and k not in wiring.vents
-        and lines[k].medium in {Medium.CONTROL_FLUID, Medium.AIR}
+        and lines[k].medium is not Medium.ELECTRIC
     ]
     return sorted(wanted, key=lambda k: k not in zone)
 
 
-def _behind_bottle_valve(wiring: Wiring, line: LineId) -> bool:
-    devices = [wiring.device(tag) for tag in wiring.touching[line]]
-    return len(devices) == 1 and devices[0].kind is DeviceKind.BOTTLE_VALVE
+def _bank_side(wiring: Wiring, line: LineId) -> LineId:
+    """The bank's line for a bottle behind its own valve; else the line itself."""
+    devices = wiring.touching[line]
+    if len(devices) == 1 and wiring.device(devices[0]).kind is DeviceKind.BOTTLE_VALVE:
+        return wiring.anywhere[devices[0]][line][0]
+    return line
 
 
 def _weak(

@@ -50,8 +50,9 @@ def make_plan(
     ValueError if the equipment has none of the ports that the job opens.
     """
     zone = network.opened(on, job.opens)
-    if not zone:
-        raise ValueError(f"{on} has none of the ports {', '.join(job.opens)}")
+    missing = [name for name in job.opens if name not in job.optional and not network.opened(on, (name,))]
+    if not zone or (missing and on != "unit"):
+        raise ValueError(f"{on} has no port {', '.join(missing)}")
     network = vents_for(network, frozenset(zone))
     wiring = wire(network)
     script = Script(wiring=wiring, states=[initial(wiring, positions)])

@@ -76,9 +76,7 @@ _PRESSURES: Final = _scales(
     ("MPa", 10**6),
     ("kgf/cm2|kg/cm2|kgf/cm²|kg/cm²", GRAVITY * 10**4),
 )
-_LENGTHS: Final = _scales(
-    ("m", 1), ("cm", Fraction(1, 100)), ("mm", Fraction(1, 1000)), ('in|"', INCH), ("ft|'", FOOT)
-)
+_LENGTHS: Final = _scales(("m", 1), ("cm", Fraction(1, 100)), ("mm", Fraction(1, 1000)), ('in|"', INCH), ("ft|'", FOOT))
 
 MEASURES: Final[dict[Dimension, Measure]] = {
     Dimension.PRESSURE: Measure(
@@ -113,12 +111,8 @@ MEASURES: Final[dict[Dimension, Measure]] = {
         example="20 degC or 68 degF",
         more=True,
     ),
-    Dimension.LENGTH: Measure(
-        scales=_LENGTHS, shown="m, cm, mm, in or ft", example="15 m, 50 ft or 13-5/8 in"
-    ),
-    Dimension.HEIGHT: Measure(
-        scales=_LENGTHS, shown="m, cm, mm, in or ft", example="3 m or -10 ft", least=None
-    ),
+    Dimension.LENGTH: Measure(scales=_LENGTHS, shown="m, cm, mm, in or ft", example="15 m, 50 ft or 13-5/8 in"),
+    Dimension.HEIGHT: Measure(scales=_LENGTHS, shown="m, cm, mm, in or ft", example="3 m or -10 ft", least=None),
     Dimension.DURATION: Measure(
         scales=_scales(("s|sec", 1), ("min", MINUTE), ("h|hr", HOUR), ("d", 24 * HOUR)),
         shown="s, min, h or d",
@@ -152,9 +146,7 @@ MEASURES: Final[dict[Dimension, Measure]] = {
         scales=_scales(("Cv|", 1), ("Kv", CV_PER_KV)), shown="Cv or Kv", example="12 Cv", more=True
     ),
     Dimension.ENERGY: Measure(
-        scales=_scales(
-            ("J", 1), ("kJ", 1000), ("MJ", 10**6), ("ft.lbf|ft-lbf|ft lbf|ft·lbf", FOOT * POUND * GRAVITY)
-        ),
+        scales=_scales(("J", 1), ("kJ", 1000), ("MJ", 10**6), ("ft.lbf|ft-lbf|ft lbf|ft·lbf", FOOT * POUND * GRAVITY)),
         shown="J, kJ, MJ or ft.lbf",
         example="500 kJ",
     ),

@@ -74,8 +74,7 @@ def _refuse_two_readings(plain: str, found: str, measure: Measure) -> None:
         other = f", or {decimal} {unit}".rstrip() if match[0].count(",") == 1 else ""
         raise QuantityError(
             f"{found}, where the comma may mean thousands or decimals",
-            f"{joined} {unit}".rstrip()
-            + f"{other}: no separator between thousands, and a point before decimals",
+            f"{joined} {unit}".rstrip() + f"{other}: no separator between thousands, and a point before decimals",
         )
     if _COMMA.search(plain):
         raise QuantityError(
@@ -89,11 +88,7 @@ def _refuse_two_readings(plain: str, found: str, measure: Measure) -> None:
         )
     match = _POINT_THOUSANDS.match(plain)
     unit = plain[match.end() :].strip() if match else ""
-    if (
-        match
-        and measure is MEASURES[Dimension.PRESSURE]
-        and unit.casefold() in {"psi", "psig", "bar", "barg"}
-    ):
+    if match and measure is MEASURES[Dimension.PRESSURE] and unit.casefold() in {"psi", "psig", "bar", "barg"}:
         decimal = match[0].rstrip("0").rstrip(".")
         decimal = f"{decimal}0" if decimal == match[0] else decimal
         raise QuantityError(
@@ -119,14 +114,10 @@ def _scale(unit: str, found: str, dimension: Dimension) -> Scale:
             f"and write {measure.example}",
         )
     if _IMPERIAL.fullmatch(unit):
-        raise QuantityError(
-            f"{found}, in imperial gallons", f"{article} in {measure.shown}: a gal is a US gallon here"
-        )
+        raise QuantityError(f"{found}, in imperial gallons", f"{article} in {measure.shown}: a gal is a US gallon here")
     kin = next((name for name in measure.scales if name.casefold() == unit.casefold()), None)
     if kin is not None:
-        raise QuantityError(
-            f"{found}, with the unit '{unit}'", f"'{kin}', if that is meant: capitals matter in it"
-        )
+        raise QuantityError(f"{found}, with the unit '{unit}'", f"'{kin}', if that is meant: capitals matter in it")
     other = next((d for d, m in MEASURES.items() if unit in m.scales), None)
     what = f"{found}, {_with_article(other)}" if other else f"{found}, with the unit '{unit[:_SHOWN]}'"
     raise QuantityError(what, f"{article} in {measure.shown}, such as {measure.example}")

@@ -103,10 +103,7 @@ class Units:
     def pressure(self, pag: float) -> str:
         """A gauge pressure or a difference [Pa]."""
         return _joined(
-            [
-                _written(pag, Dimension.PRESSURE, u, _PRESSURE_STEPS[u], _nearest_or_one)
-                for u in self.pressure_units
-            ]
+            [_written(pag, Dimension.PRESSURE, u, _PRESSURE_STEPS[u], _nearest_or_one) for u in self.pressure_units]
         )
 
     def pressure_band(self, low_pag: float, high_pag: float) -> str:
@@ -120,9 +117,7 @@ class Units:
 
     def volume(self, m3: float) -> str:
         """A volume [m3]."""
-        return _joined(
-            [_written(m3, Dimension.VOLUME, u, _VOLUME_STEPS, _nearest_or_one) for u in self.volume_units]
-        )
+        return _joined([_written(m3, Dimension.VOLUME, u, _VOLUME_STEPS, _nearest_or_one) for u in self.volume_units])
 
     def flow(self, m3_s: float) -> str:
         """A flow [m3/s], a minute."""
@@ -151,9 +146,7 @@ class Units:
     def bore(self, metre: float) -> str:
         """A bore [m]: in inches and sixteenths where it is one, as the trade says it, else in decimals."""
         _finite(metre)
-        return _joined(
-            [_bore_in(metre) if u is LengthUnit.FT else _bore_mm(metre) for u in self.length_units]
-        )
+        return _joined([_bore_in(metre) if u is LengthUnit.FT else _bore_mm(metre) for u in self.length_units])
 
     def energy(self, joule: float) -> str:
         """An energy [J], in kJ or MJ: one unit serves all sites."""

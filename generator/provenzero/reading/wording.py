@@ -36,7 +36,6 @@ _BOUNDS: Final = {
 _FORMATS: Final = {"date": "a date such as 2026-03-31", "date-time": "a time such as 2026-03-31T14:05:00Z"}
 _MISSING: Final = frozenset({"required", "dependentRequired"})
 _UNKNOWN: Final = frozenset({"additionalProperties", "unevaluatedProperties"})
-_FORBIDDEN: Final = "None"  # the keyword of a fault against the schema `false`
 
 
 def findings_of(faults: Iterable[Fault], document: Document) -> Iterator[Finding]:
@@ -49,9 +48,10 @@ def findings_of(faults: Iterable[Fault], document: Document) -> Iterator[Finding
             yield from _of_choice(fault, document)
         elif fault.keyword in _UNKNOWN:
             yield from _of_unknown(fault, document)
+        elif fault.keyword in _MISSING and not _missing(fault):
+            continue  # the key is there with a slip of the pen, and told as an unknown one
         else:
-            at_key = fault.on_key or fault.keyword == _FORBIDDEN
-            place = document.key_place(fault.path) if at_key else document.place(fault.path)
+            place = document.key_place(fault.path) if fault.on_key else document.place(fault.path)
             found, expected = _words(fault)
             yield Finding(place=place, found=found, expected=expected)
 
@@ -70,12 +70,9 @@ def _of_choice(fault: Fault, document: Document) -> Iterator[Finding]:
 
 
 def _of_unknown(fault: Fault, document: Document) -> Iterator[Finding]:
-    if not isinstance(fault.value, dict):
-        return
     known = list(fault.schema.get("properties", {}))
-    for key in fault.value:
-        if key not in known and repr(key) in fault.message:
-            near = nearest(key, known)
+    for key, near in _strange_keys(fault).items():
+        if repr(key) in fault.message:
             expected = f"a known key: did you mean '{near}'?" if near else f"a known key: {_list(known)}"
             place = document.key_place((*fault.path, key))
             yield Finding(place=place, found=f"the unknown key '{key}'", expected=expected)
@@ -90,30 +87,46 @@ def _words(fault: Fault) -> tuple[str, str]:
         hints = [_hint(fault.schema.get("properties", {}).get(key, {})) for key in missing]
         hint = f" ({hints[0]})" if len(missing) == 1 and hints[0] else ""
         return "no " + " and no ".join(f"'{k}'" for k in missing), f"the {noun} {_list(missing)}{hint}"
-    if fault.keyword == _FORBIDDEN:
-        return f"the key '{fault.path[-1] if fault.path else ''}'", "that key left out"
     if fault.keyword == "pattern" and isinstance(fault.value, str):
         return _pattern_words(fault.value, fault.schema) or (found, _expected(fault))
     return found, _expected(fault)
 
 
+def _strange_keys(fault: Fault) -> dict[str, str | None]:
+    """The keys of a mapping that its schema does not name, each with the known key that was most likely meant."""
+    known = fault.schema.get("properties", {})
+    present = fault.value if isinstance(fault.value, dict) else {}
+    return {key: nearest(key, [k for k in known if k not in present]) for key in present if key not in known}
+
+
 def _missing(fault: Fault) -> list[str]:
+    """The keys that are asked for and not there, not even with a slip of the pen that is told by itself."""
     present: Mapping[str, Value] = fault.value if isinstance(fault.value, dict) else {}
     if fault.keyword == "required":
-        return [key for key in fault.wanted if key not in present]
-    return [key for cause, keys in fault.wanted.items() if cause in present for key in keys if key not in present]
+        missing = [key for key in fault.wanted if key not in present]
+    else:
+        missing = [
+            key for cause, keys in fault.wanted.items() if cause in present for key in keys if key not in present
+        ]
+    slips = _strange_keys(fault).values() if fault.schema.get("additionalProperties") is False else ()
+    return [key for key in missing if key not in slips]
 
 
 def _pattern_words(text: str, schema: Mapping[str, Any]) -> tuple[str, str] | None:
     """What is wrong with text that was meant to be a quantity, as the schema's examples are."""
-    example = next((e for e in schema.get("examples", ()) if isinstance(e, str)), "")
-    dimension = next((d for d in Dimension if _is_quantity(example, d)), None)
+    dimension = _dimension(schema)
     if dimension is not None:
         try:
             parse(text, dimension)
         except QuantityError as error:
             return error.found, error.expected
     return None
+
+
+def _dimension(schema: Mapping[str, Any]) -> Dimension | None:
+    """The dimension of the quantities that the examples of a schema are."""
+    example = next((e for e in schema.get("examples", ()) if isinstance(e, str)), "")
+    return next((d for d in Dimension if _is_quantity(example, d)), None)
 
 
 def _is_quantity(text: str, dimension: Dimension) -> bool:
@@ -147,17 +160,17 @@ def _expected(fault: Fault) -> str:
 
 def _expected_word(value: Value, words: list[Value]) -> str:
     near = nearest(value, [w for w in words if isinstance(w, str)]) if isinstance(value, str) else None
-    expected = f"one of {_list(words)}" if len(words) > 1 else f"'{_plain(words[0])}'"
+    expected = f"one of {_list(words)}" if len(words) > 1 else _shown(words[0])
     return f"{expected}: did you mean '{near}'?" if near and len(words) > 1 else expected
 
 
 def _expected_type(fault: Fault) -> str:
     types = fault.wanted if isinstance(fault.wanted, list) else [fault.wanted]
     if "string" in types and not isinstance(fault.value, dict | list):
+        if types == ["string"] and fault.value is not None and _dimension(fault.schema) is None:
+            return f"text, in quotes: '{_plain(fault.value)}'"
         if fault.schema.get("examples"):
             return _hint(fault.schema)
-        if types == ["string"] and fault.value is not None:
-            return f"text, in quotes: '{_plain(fault.value)}'"
     return " or ".join(_TYPES[t] for t in types)
 
 
@@ -188,7 +201,18 @@ def _shown(value: Value) -> str:
 
 
 def _plain(value: object) -> str:
-    return str(value).lower() if isinstance(value, bool) else "nothing" if value is None else str(value)
+    """A value as it would stand in a file."""
+    match value:
+        case dict():
+            return "{" + ", ".join(f"{key}: {_plain(item)}" for key, item in value.items()) + "}"
+        case list():
+            return "[" + ", ".join(_plain(item) for item in value) + "]"
+        case None:
+            return "nothing"
+        case bool():
+            return str(value).lower()
+        case _:
+            return str(value)
 
 
 def _list(words: Iterable[object]) -> str:

@@ -317,7 +317,7 @@ def test_columns_share_the_whole_width(document: Document) -> None:
 
 
 def test_the_same_input_gives_the_same_document(document: Document, brief: Brief) -> None:
-    assert document == made(replace(brief, proof=dict(reversed(brief.proof.items()))))
+    assert document == made(replace(brief, proof=dict(reversed(list(brief.proof.items())))))
 
 
 def test_the_fingerprint_is_grouped_in_fours(document: Document) -> None:

@@ -40,7 +40,7 @@ def test_a_file_without_a_part_of_the_contract_is_not_valid(name: str, text: str
 
 
 def test_the_same_input_gives_the_same_bytes(text: str, brief: Brief) -> None:
-    assert text == made(replace(brief, proof=dict(reversed(brief.proof.items()))))
+    assert text == made(replace(brief, proof=dict(reversed(list(brief.proof.items())))))
 
 
 def test_the_network_is_whole(text: str, plan: Plan) -> None:

@@ -52,9 +52,15 @@ UNIT: dict[str, Any] = {
         "lockable": {"type": "boolean"},
         "bottles": {"type": "integer", "minimum": 1, "maximum": 99},
         "code": {"type": "string", "pattern": "^[A-Z]+$"},
+        "format": {"const": 1},
+        "place": {"type": "string", "examples": ["left end of the skid"]},
+        "site": {
+            "type": "object",
+            "required": ["lines"],
+            "properties": {"lines": {"type": "object", "examples": [{"kind": "hose", "taps": [1, True]}]}},
+        },
         "bleed": {"oneOf": [{"const": "none"}, {"type": "object", "required": ["tag"]}]},
         "lock": {"anyOf": [{"required": ["hand"]}, {"required": ["pilot"]}], "type": "object"},
-        "old": False,
         "functions": {
             "type": "object",
             "propertyNames": {"pattern": "^[a-z-]+$", "description": "Lower-case words with hyphens."},
@@ -128,8 +134,10 @@ head: {tag: A, by: B, on: C}
         ("bottles: 0", "1:10: bottles: found the number 0; expected a number of at least 1"),
         ("bottles: 100", "1:10: bottles: found the number 100; expected a number of at most 99"),
         ("bottles: 1.5", "1:10: bottles: found the number 1.5; expected a whole number"),
+        ("format: 2", "1:9: format: found the number 2; expected the number 1"),
+        ("place: 7", "1:8: place: found the number 7; expected text, in quotes: '7'"),
+        ("place:", "1:7: place: found no value; expected a value such as left end of the skid"),
         ("code: abc", "1:7: code: found 'abc'; expected text of the form ^[A-Z]+$"),
-        ("old: 1", "1:1: old: found the key 'old'; expected that key left out"),
         (
             "functions: {Upper Rams: x}",
             "1:13: functions['Upper Rams']: found 'Upper Rams'; expected lower-case words with hyphens",
@@ -144,7 +152,12 @@ head: {tag: A, by: B, on: C}
         ),
         (
             "precharge: lots",
-            "1:12: precharge: found 'lots'; expected one number and its unit, such as 3000 psi or 210 bar, or 'unknown'",
+            "1:12: precharge: found 'lots'; expected one number and its unit, such as 3000 psi or 210 bar, "
+            "or 'unknown'",
+        ),
+        (
+            "site: {}",
+            "1:1: site: found no 'lines'; expected the key lines (a value such as {kind: hose, taps: [1, true]})",
         ),
         ("bleed: maybe", "1:8: bleed: found 'maybe'; expected 'none', or a mapping of keys"),
         ("bleed: {}", "1:1: bleed: found no 'tag'; expected the key tag"),
@@ -175,6 +188,12 @@ def test_an_unknown_key_is_told_the_known_ones_or_the_one_that_was_meant(folder:
     assert told(text, folder) == [
         "4:3: pumps[0].vlave: found the unknown key 'vlave'; expected a known key: did you mean 'valve'?",
         "5:3: pumps[0].colour: found the unknown key 'colour'; expected a known key: kind, tag, valve",
+    ]
+
+
+def test_a_key_that_is_asked_for_and_misspelt_is_told_once(folder: Path) -> None:
+    assert told("pumps:\n- kind: electric\n  tag: P-1\n  braker: B-1\n", folder) == [
+        "4:3: pumps[0].braker: found the unknown key 'braker'; expected a known key: did you mean 'breaker'?"
     ]
 
 

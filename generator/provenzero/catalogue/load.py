@@ -1,0 +1,72 @@
+"""Job files to jobs: the shipped catalogue, and a folder of the site's own beside it."""
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+from pathlib import Path
+from typing import Any
+
+from provenzero.catalogue.job import Condition, Equipment, Job, Leave, TestKind
+from provenzero.finding import Finding, has_errors
+from provenzero.reading.lines import Document, load, load_text
+from provenzero.reading.schema import check
+from provenzero.resources import checklists
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Catalogue:
+    """The jobs there are, in the order of their names, and what is wrong with files that were left out."""
+
+    jobs: tuple[Job, ...]
+    findings: tuple[Finding, ...]
+
+    def job(self, name: str) -> Job | None:
+        """The job of a name, or None."""
+        return next((j for j in self.jobs if j.id == name), None)
+
+
+def catalogue(own: Path | None = None) -> Catalogue:
+    """Read the shipped jobs, and those of a folder of the site, which replace shipped ones of the same name."""
+    found: dict[str, Job] = {}
+    findings: list[Finding] = []
+    for file in sorted(checklists().joinpath("jobs").iterdir(), key=lambda f: f.name):
+        if file.name.endswith(".yaml"):
+            document = load_text(file.read_text(encoding="utf-8"), file.name)
+            if isinstance(document, Document):  # the tests hold every shipped file against its schema
+                job = job_of(document.data)
+                found[job.id] = job
+    for path in sorted(own.glob("*.yaml")) if own is not None else ():
+        read = read_job(path)
+        findings += read.findings
+        found.update({j.id: j for j in read.jobs})
+    return Catalogue(jobs=tuple(found[k] for k in sorted(found)), findings=tuple(findings))
+
+
+def read_job(path: Path) -> Catalogue:
+    """Read one job file with all its faults."""
+    document = load(path)
+    if not isinstance(document, Document):
+        return Catalogue(jobs=(), findings=tuple(document))
+    findings = check(document, "job")
+    jobs = () if has_errors(findings) else (job_of(document.data),)
+    return Catalogue(jobs=jobs, findings=tuple(findings))
+
+
+def job_of(data: Any) -> Job:
+    """The job of data that fits the schema."""
+    only: Mapping[str, list[str]] = data.get("only", {})
+    return Job(
+        id=data["job"],
+        title=data["title"],
+        equipment=Equipment(data["equipment"]),
+        conditions=tuple(Condition(attribute=k, allowed=tuple(v)) for k, v in only.items()),
+        opens=tuple(name.removesuffix("?") for name in data["opens"]),
+        optional=tuple(name.removesuffix("?") for name in data["opens"] if name.endswith("?")),
+        leave=Leave(data.get("leave", "as_found")),
+        limits=tuple(data["limits"]),
+        hazards=tuple(data["hazards"]),
+        tools=tuple(data.get("tools", ())),
+        prepare=tuple(data.get("prepare", ())),
+        work=tuple(data["work"]),
+        restore=tuple(data["restore"]),
+        tests=tuple(TestKind(name) for name in data["tests"]),
+    )
