@@ -1,6 +1,6 @@
 """`python -m provenzero` is the command itself."""
 
-from provenzero.cli.app import app
+from provenzero.cli.app import main
 
 if __name__ == "__main__":
-    app()
+    main()

@@ -162,7 +162,14 @@ def _quiet(walked: Walk) -> Verdict:
 
 def _honest(walked: Walk) -> Verdict:
     number = sum(len(moment.step.get("expect") or ()) for moment in walked.moments)
-    return _verdict(list(untrue_readings(walked)), f"{number} promised readings contain what is computed")
+    circuit, pressures = walked.circuit, walked.during_work.pressures
+    faults = [
+        f"{circuit.ids[line]} is called dead and may hold {pressures.text(line)}"
+        for line in walked.said_dead
+        if pressures.high[line] > circuit.head_pag[line]
+    ]
+    faults += untrue_readings(walked)
+    return _verdict(faults, f"{number} promised readings contain what is computed")
 
 
 def _reversible(walked: Walk) -> Verdict:

@@ -145,10 +145,7 @@ class TestLocked:
         three_way = {"shut": [], "left": [way("header open first")], "right": [way("second open run")]}
         add(plan, device("TW", three_way))
         add(plan, valve("MV", "first", "second"), "closed")
-        assert (
-            "header -(TW in left)-> first -(MV in open)-> second -(TW in right)-> run"
-            in locked(plan).evidence
-        )
+        assert "header -(TW in left)-> first -(MV in open)-> second -(TW in right)-> run" in locked(plan).evidence
 
     @pytest.mark.parametrize("kind", ["check", "regulator", "relief"])
     def test_no_valve_that_passes_one_way_is_a_barrier_the_other_way(self, kind: str) -> None:
@@ -274,6 +271,14 @@ class TestLeast:
         assert "without lock 3 on FW nothing comes to the zone" in least(plan).evidence
         assert not least(plan).holds
 
+    def test_a_lock_that_keeps_pressure_from_other_lines_only_is_one_too_many(self) -> None:
+        plan = small_plan()
+        add_line(plan, line("pot"))
+        add(plan, valve("PV", "header", "pot"), "closed")
+        plan["steps"].insert(0, step(0, "isolate", lock=3))
+        plan["locks"].append({"number": 3, "device": "PV", "position": "closed"})
+        assert "without lock 3 on PV nothing comes to the zone" in least(plan).evidence
+
     def test_a_lock_counts_that_only_keeps_a_vent_open(self) -> None:
         plan = small_plan() | {"open_to_vent": []}
         assert "without lock 2 on DV" in least(plan).evidence
@@ -370,6 +375,20 @@ class TestQuiet:
         plan["network"]["initial"]["positions"]["FW"] = "centre"
         plan["steps"] = [step(1, "prepare", sets="FW close")]
         assert "ram travels to close" in quiet(plan).evidence
+
+    def test_a_piston_that_is_said_to_stand_where_it_is_pushed_to_stays(self) -> None:
+        for end, calm in (("close", True), ("open", False), ("unknown", False)):
+            plan = small_plan()
+            plan["network"]["initial"]["positions"]["FW"] = "centre"
+            plan["network"]["initial"]["pistons"] = {"ram": end}
+            plan["steps"] = [step(1, "prepare", sets="FW close")]
+            assert quiet(plan).holds is calm
+
+    def test_what_is_said_of_a_piston_counts_less_than_what_pushes_it(self) -> None:
+        plan = small_plan()
+        plan["network"]["initial"]["pistons"] = {"ram": "open"}
+        plan["steps"] = [step(1, "prepare", sets="FW open")]
+        assert "ram travels to open" in quiet(plan).evidence
 
     def test_the_bottles_alone_move_a_piston(self) -> None:
         plan = small_plan()
@@ -510,6 +529,10 @@ class TestHonest:
         plan["steps"][0]["expect"] = reads("stub", 0.0, 0.0)
         assert "stub is at [0, 20700000] Pa" in honest(plan).evidence
 
+    def test_a_line_that_is_called_dead_has_to_be(self) -> None:
+        assert honest(small_plan() | {"dead": ["run", "closing"]}).holds
+        assert "header is called dead" in honest(small_plan() | {"dead": ["run", "header"]}).evidence
+
     def test_no_tolerance_makes_a_zero(self) -> None:
         plan = small_plan()
         add_line(plan, line("pot"), [0.0, 0.1e6])
@@ -517,9 +540,7 @@ class TestHonest:
         assert "reads as zero" in honest(plan).evidence
 
     @pytest.mark.parametrize(("low", "high"), [(0.0, 5e6), (1e6, 1.5e6)])
-    def test_a_band_that_nobody_takes_for_zero_only_has_to_be_wide_enough(
-        self, low: float, high: float
-    ) -> None:
+    def test_a_band_that_nobody_takes_for_zero_only_has_to_be_wide_enough(self, low: float, high: float) -> None:
         plan = small_plan()
         add_line(plan, line("pot"), [1.1e6, 1.4e6])
         plan["steps"][0]["expect"] = reads("pot", low, high)
@@ -553,9 +574,7 @@ class TestReversible:
         add_line(plan, line("pan"), [4e6, 4e6])
         add(plan, valve("PV", "pot", "pan"), "closed")
         plan["steps"] += [step(7, "test", sets="PV open"), step(8, "test", sets="PV closed")]
-        assert (
-            "pot ends at [4000000, 5000000] Pa, began at [5000000, 5000000] Pa" in reversible(plan).evidence
-        )
+        assert "pot ends at [4000000, 5000000] Pa, began at [5000000, 5000000] Pa" in reversible(plan).evidence
 
     def test_a_line_that_was_emptied_and_has_no_source_may_stay_empty(self) -> None:
         plan = small_plan()
@@ -569,6 +588,16 @@ class TestReversible:
         find(plan, "SV")["positions"]["open"] = [way("header regulator run", 10e6)]
         plan["network"]["initial"]["pressures_pag"] |= {"run": [15e6, 15e6], "closing": [15e6, 15e6]}
         assert reversible(plan).holds
+
+    def test_gas_that_was_let_out_has_to_be_filled_in_again(self) -> None:
+        plan = small_plan()
+        plan["network"]["initial"]["positions"]["BV"] = "closed"
+        add(plan, valve("BB", "bank", "tank"), "closed")
+        plan["steps"] += [step(7, "work", sets="BB open"), step(8, "reinstate", sets="BB closed")]
+        plan["steps"].append(step(9, "reinstate", recharges="bank"))
+        assert reversible(plan).holds
+        plan["steps"][-2:] = reversed(plan["steps"][-2:])
+        assert not reversible(plan).holds
 
     def test_a_line_that_gained_pressure_is_told(self) -> None:
         plan = small_plan()

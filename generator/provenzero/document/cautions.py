@@ -1,5 +1,8 @@
 """Cautions of the job as a whole, and what to wear and bring."""
 
+from collections import Counter
+from collections.abc import Iterable
+
 from provenzero.catalogue.job import Equipment
 from provenzero.document.brief import Brief
 from provenzero.document.model import Block, Bullets, Notice, Signal, Words
@@ -41,10 +44,15 @@ def protection(brief: Brief) -> Bullets:
         volume = measure.volumes(brief.figures.returned_total_m3)
         points.append(brief.say("protection.container", volume=volume))
     if plan.job.tools:
-        points.append(brief.say("protection.tools", names="; ".join(plan.job.tools)))
+        points.append(brief.say("protection.tools", names=_listed(plan.job.tools)))
     if plan.job.hazards:
-        points.append(brief.say("protection.job", names="; ".join(plan.job.hazards)))
+        points.append(brief.say("protection.job", names=_listed(plan.job.hazards)))
     return Bullets(title=brief.say("protection.title"), points=tuple(points))
+
+
+def _listed(items: Iterable[str]) -> str:
+    """Short sentences as one list."""
+    return "; ".join(item.rstrip(".") for item in items)
 
 
 def _caution(brief: Brief, signal: Signal, key: str, **facts: str) -> Notice:
@@ -67,8 +75,15 @@ def _nitrogen(brief: Brief) -> list[LineId]:
 
 
 def _free_gas(brief: Brief) -> str:
-    tags = {str(k).partition("/")[0] for k in _nitrogen(brief)}
-    bands = [b.free_gas_m3 for b in brief.figures.banks if b.tag in tags and b.free_gas_m3 is not None]
-    if not bands or len(bands) < len(tags):
-        return brief.measure.volumes(None)
-    return brief.measure.volumes((sum(b[0] for b in bands), sum(b[1] for b in bands)))
+    """Free nitrogen that the emptied bottles give off; not known where that of one of them is not."""
+    emptied = Counter(str(k).partition("/")[0] for k in _nitrogen(brief))
+    low = high = 0.0
+    for bank in brief.plan.unit.banks:
+        if bank.tag not in emptied:
+            continue
+        figures = brief.figures.bank(bank.tag)
+        if figures is None or figures.free_gas_m3 is None:
+            return brief.measure.volumes(None)
+        share = emptied[bank.tag] / bank.bottles
+        low, high = low + figures.free_gas_m3[0] * share, high + figures.free_gas_m3[1] * share
+    return brief.measure.volumes((low, high))

@@ -5,6 +5,8 @@ from dataclasses import dataclass
 from provenzero.document.model import Paper
 from provenzero.quantity import Units
 
+_SHORT = 19  # four groups of four
+
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class PermitContext:
@@ -21,7 +23,11 @@ class PermitContext:
     hold_s: float | None = None
     recheck_s: float | None = None
 
+    def short_fingerprint(self) -> str:
+        """The head of the fingerprint in groups of four, as it stands on every page."""
+        return self.grouped_fingerprint()[:_SHORT]
+
     def grouped_fingerprint(self) -> str:
-        """The fingerprint in groups of four."""
+        """The whole fingerprint in groups of four."""
         plain = self.fingerprint.replace(" ", "")
         return " ".join(plain[i : i + 4] for i in range(0, len(plain), 4))

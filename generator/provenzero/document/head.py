@@ -181,7 +181,9 @@ def impairment(brief: Brief) -> Table:
         needed=measure.volume(figures.usable_needed_m3),
     )
     rows.append((_strong(brief, "capacity"), Text(words=capacity), Blank(), Blank()))
-    rows.append((_strong(brief, "charging"), Text(words=measure.durations(figures.charging_s)), Blank(), Blank()))
+    left = brief.plan.impairment.power_sources_left
+    charging = measure.durations(figures.charging_s) if left else brief.say("impairment.no_power")
+    rows.append((_strong(brief, "charging"), Text(words=charging), Blank(), Blank()))
     columns = tuple(
         Column(title=brief.say(f"impairment.{key}"), percent=percent)
         for key, percent in (("what", 22), ("names", 30), ("measure", 28), ("until", 20))

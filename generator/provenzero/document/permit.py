@@ -50,7 +50,7 @@ def identity(brief: Brief, marks: tuple[str, ...]) -> Identity:
             (brief.say("identity.unit"), unit.identity.tag),
             (brief.say("identity.job"), f"{brief.plan.job.title}, {brief.plan.on}"),
             (brief.say("identity.revision"), unit.description.revision),
-            (brief.say("identity.fingerprint"), brief.context.grouped_fingerprint()),
+            (brief.say("identity.fingerprint"), brief.context.short_fingerprint()),
         ),
         marks=marks,
     )

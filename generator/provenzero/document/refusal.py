@@ -29,7 +29,7 @@ def refusal(refused: Refusal, context: PermitContext, wording: Wording) -> Docum
         (wording.say("identity.unit"), unit.identity.tag),
         (wording.say("identity.job"), f"{refused.job.title}, {refused.on}"),
         (wording.say("identity.revision"), unit.description.revision),
-        (wording.say("identity.fingerprint"), context.grouped_fingerprint()),
+        (wording.say("identity.fingerprint"), context.short_fingerprint()),
     )
     stop = Notice(
         signal=Signal.DANGER,

@@ -12,7 +12,7 @@ from dataclasses import dataclass
 
 from provenzero.drawing.alternative import alternative, title
 from provenzero.drawing.banks import bank_block, header_block
-from provenzero.drawing.block import Block, shelves
+from provenzero.drawing.block import Block, in_nooks, shelves
 from provenzero.drawing.canvas import Canvas
 from provenzero.drawing.functions import function_block
 from provenzero.drawing.legend import legend_block
@@ -76,7 +76,7 @@ def _right(scene: Scene, silent: frozenset[LineId]) -> list[Block]:
             blocks.append(bypass_block(scene, link, WIDTH_MM / 2, silent))
             left.remove(link)
     blocks += [bypass_block(scene, link, WIDTH_MM / 2, silent) for link in left]
-    blocks += [function_block(scene, item, WIDTH_MM / 4, silent) for item in scene.unit.functions]
+    blocks += [function_block(scene, item, silent) for item in scene.unit.functions]
     return blocks
 
 
@@ -87,10 +87,10 @@ def _left(scene: Scene, limit: float, silent: frozenset[LineId]) -> list[Block]:
     banks = [bank_block(scene, item, limit, silent) for item in unit.banks if item.attached_to not in chambers]
     backups = [backup_block(scene, item, limit, silent) for item in unit.nitrogen_backups]
     air = [] if unit.air is None else [air_block(scene, unit.air, limit, silent)]
-    panels = shelves([panel_block(scene, item) for item in unit.panels], limit, _SHELF_GAP)
-    others = [*pumps, header_block(scene, limit, silent), *banks, *backups, *air, *panels]
-    wide = max(block.width for block in others)
-    return [reservoir_block(scene, unit.reservoir, wide, silent), *others]
+    rows = [*pumps, header_block(scene, limit, silent), *banks, *backups]
+    wide = max(block.width for block in (*rows, *air))
+    rows, panels = in_nooks(rows, [panel_block(scene, item) for item in unit.panels], wide, _GAP)
+    return [reservoir_block(scene, unit.reservoir, wide, silent), *rows, *air, *shelves(panels, wide, _SHELF_GAP)]
 
 
 def _divide(scene: Scene, left: Sequence[Block], right: Sequence[Block]) -> list[_Sheet]:

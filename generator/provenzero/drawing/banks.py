@@ -60,7 +60,8 @@ def bank_block(scene: Scene, item: Bank, limit_mm: float, silent: frozenset[Line
         cells.append(_turned(valve))
     row = Row(scene, fluid, cells, limit_mm=limit_mm, silent=silent, from_first=True)
     return Block(
-        names=(item.tag,), width=row.width, up=row.up, down=row.down, right=(Tap(main, row.out),), draw=row.draw
+        names=(item.tag,), width=row.width, up=row.up, down=row.down, right=(Tap(main, row.out),),
+        roomy=row.out == 0.0, draw=row.draw,
     )
 
 

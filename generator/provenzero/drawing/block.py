@@ -17,7 +17,10 @@ class Tap:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Block:
-    """A piece of the sheet. `draw` takes the left end, the height of the block's line, and how far right its line goes."""
+    """A piece of the sheet. `draw` takes the left end, the height of the block's line, and how far right its line goes.
+
+    `roomy`: over the line that leaves it at the right there is nothing.
+    """
 
     names: tuple[str, ...]
     width: float
@@ -25,12 +28,37 @@ class Block:
     down: float
     left: tuple[Tap, ...] = ()
     right: tuple[Tap, ...] = ()
+    roomy: bool = False
     draw: Callable[[Canvas, float, float, float], None]
 
     @property
     def height(self) -> float:
         """Height [mm]."""
         return self.up + self.down
+
+
+def in_nooks(blocks: list[Block], small: list[Block], width: float, gap: float) -> tuple[list[Block], list[Block]]:
+    """Put blocks that tap nothing into the free corners over the lines that leave others; returns all, and what is left over."""
+    found, left = list(blocks), []
+    for item in small:
+        for place, block in enumerate(found):
+            if block.roomy and width - block.width >= item.width + gap and block.up >= item.height + gap:
+                found[place] = _beside(block, item, width, gap)
+                break
+        else:
+            left.append(item)
+    return found, left
+
+
+def _beside(block: Block, item: Block, width: float, gap: float) -> Block:
+    def draw(canvas: Canvas, x: float, y: float, end: float) -> None:
+        block.draw(canvas, x, y, end)
+        item.draw(canvas, x + width - item.width, y - gap - item.down, end)
+
+    return Block(
+        names=(*block.names, *item.names), width=width, up=block.up, down=block.down, left=block.left, right=block.right,
+        draw=draw,
+    )
 
 
 def shelves(blocks: list[Block], limit_mm: float, gap: float) -> list[Block]:

@@ -50,10 +50,10 @@ from provenzero.unit.model import (
     Valve,
 )
 
-LEAD = 2.2
+LEAD = 1.6
 ROOM = 0.7
-RISE = 6.4
-_NARROWEST = 5.8
+RISE = 5.8
+_DROP = 1.0
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -87,39 +87,33 @@ def symbol_of(scene: Scene, element: Inline) -> Symbol:
             return reducer()
 
 
-def through(scene: Scene, element: Inline, *, tags_above: bool = False) -> Cell:
-    """A cell of what the fluid goes through, its tag under it or over it, its lock at the opposite corner."""
-    return device_cell(scene, element.tag, symbol_of(scene, element), *scene.ends(element.tag), tags_above=tags_above)
+def through(scene: Scene, element: Inline) -> Cell:
+    """A cell of what the fluid goes through."""
+    return device_cell(scene, element.tag, symbol_of(scene, element), *scene.ends(element.tag))
 
 
-def device_cell(  # noqa: PLR0913 - a device is its tag, its symbol and its two lines
-    scene: Scene, name: str, symbol: Symbol, line_in: LineId, line_out: LineId, *, tags_above: bool = False
-) -> Cell:
-    """A cell of any device with a symbol that the line goes through."""
+def device_cell(scene: Scene, name: str, symbol: Symbol, line_in: LineId, line_out: LineId) -> Cell:
+    """A cell of any device that the line goes through: its tag over it, its lock at the corner below."""
     words, lock, where = tag(name), scene.lock(name), scene.vent(name)
     body = symbol.body.grown(BOX_MARGIN) if lock is not None else symbol.body
-    half = max(words.width / 2 + ROOM, _NARROWEST)
+    half = max(words.width / 2 + ROOM, symbol.body.right + LEAD)
     if where is not None:
         half = max(half, vent_width(scene, where) / 2 + ROOM)
-    beyond = words.reach + (0.0 if where is None else GAP + VENT_HEIGHT)
-    corner = LOCK_HALF + CORNER if lock is not None else 0.0
-    left = half if lock is None else max(half, CORNER - body.left + lock_half(lock))
+    up = words.reach + (0.0 if where is None else GAP + VENT_HEIGHT)
+    corner = 0.0 if lock is None else CORNER + lock_half(lock)
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
         placed = canvas.symbol(symbol, (x, y), name, boxed=lock is not None)
-        (words.above if tags_above else words.below)(canvas, x, placed, name)
+        words.above(canvas, x, placed, name)
         if lock is not None:
-            lozenge(
-                canvas, (placed.left - CORNER, placed.bottom + CORNER if tags_above else placed.top - CORNER), lock, name
-            )
+            lozenge(canvas, (placed.left - CORNER, placed.bottom + CORNER), lock, name)
         if where is not None:
-            top = placed.top - beyond if tags_above else placed.bottom + beyond - VENT_HEIGHT
-            vent_mark(canvas, scene, where, (x - vent_width(scene, where) / 2, top), name)
+            vent_mark(canvas, scene, where, (x - vent_width(scene, where) / 2, placed.top - up), name)
 
     return Cell(
-        left=left, right=half, up=(beyond if tags_above else corner) - body.top,
-        down=body.bottom + (corner if tags_above else beyond), line_in=line_in, line_out=line_out,
-        body=(symbol.body.left, symbol.body.right), clear=body.left if lock is None else -left, paint=paint,
+        left=max(half, corner - body.left), right=half, up=up - body.top,
+        down=body.bottom + (0.0 if lock is None else CORNER + LOCK_HALF), line_in=line_in, line_out=line_out,
+        body=(symbol.body.left, symbol.body.right), clear=body.left - corner, paint=paint,
     )
 
 
@@ -200,7 +194,7 @@ def _branch(scene: Scene, parts: list[Part], line: LineId, to: LineId | None, *,
     for one, other in pairwise(parts):
         apart = max(one.right + ROOM + other.left, one.body.right + LEAD - other.body.left)
         places.append(places[-1] + apart)
-    out = places[-1] + parts[-1].body.right + 2.1
+    out = places[-1] + parts[-1].body.right + 1.4
     where = scene.vent(parts[0].name)
     stub = scene.ends(parts[0].name)[1] if to is None else None
     told = scene.told(stub) if stub is not None else ""
@@ -220,8 +214,8 @@ def _branch(scene: Scene, parts: list[Part], line: LineId, to: LineId | None, *,
             here = stub or to or line
             points = [(x + place + part.symbol.body.right, level)]
         if to is not None:
-            canvas.wire(to, *points, (x + out, level), (x + out, level + 1.4))
-            outlet(canvas, scene, to, (x + out, level + 1.4))
+            canvas.wire(to, *points, (x + out, level), (x + out, level + _DROP))
+            outlet(canvas, scene, to, (x + out, level + _DROP))
         beyond = level + sign * (edge + GAP)
         if where is not None:
             vent_mark(canvas, scene, where, (x, beyond if below else beyond - VENT_HEIGHT), parts[0].name)

@@ -5,7 +5,7 @@ from dataclasses import dataclass
 
 from provenzero.drawing.canvas import Canvas
 from provenzero.drawing.cells import LEAD, ROOM, Part
-from provenzero.drawing.plates import flag_width, from_flag
+from provenzero.drawing.plates import from_flag
 from provenzero.drawing.scene import Scene
 from provenzero.drawing.symbols import isolator, shut_off
 from provenzero.drawing.tags import GAP, LABEL_HEIGHT, VENT_HEIGHT, label, label_width, locked_tag, vent_mark, vent_width
@@ -26,12 +26,13 @@ class Feed:
 def feed(scene: Scene, words: str, supply: LineId, load: LineId, device: Valve | Isolator | None) -> Feed:
     """The chain from a supply to a load, through the device that cuts it if there is one."""
     flag = from_flag(words)
+    wide, tall = -flag.body.left, flag.body.bottom
     if device is None:
         def bare(canvas: Canvas, right: float, y: float) -> None:
             canvas.symbol(flag, (right - LEAD, y))
             canvas.wire(supply, (right - LEAD, y), (right, y))
 
-        return Feed(width=flag_width(words) + LEAD, up=2.0, down=2.0, draw=bare)
+        return Feed(width=wide + LEAD, up=tall, down=tall, draw=bare)
     if isinstance(device, Valve):
         symbol = shut_off(scene.position(device.tag) == "open", device.exhausts)
     else:
@@ -41,7 +42,7 @@ def feed(scene: Scene, words: str, supply: LineId, load: LineId, device: Valve |
     told = scene.told(load)
     after = LEAD + (label_width(told) + 1.0 if told else 0.0)
     right = max(part.body.right + after, part.right + ROOM)
-    left = max(LEAD - part.body.left, part.left - flag_width(words) + ROOM)
+    left = max(LEAD - part.body.left, part.left - wide + ROOM)
     extra = 0.0 if where is None else VENT_HEIGHT + GAP
 
     def draw(canvas: Canvas, end: float, y: float) -> None:
@@ -56,6 +57,6 @@ def feed(scene: Scene, words: str, supply: LineId, load: LineId, device: Valve |
             vent_mark(canvas, scene, where, corner, device.tag)
 
     return Feed(
-        width=flag_width(words) + left + right, up=part.words.reach - part.body.top + extra,
-        down=max(part.body.bottom, LABEL_HEIGHT / 2), draw=draw,
+        width=wide + left + right, up=max(part.words.reach - part.body.top + extra, tall),
+        down=max(part.body.bottom, LABEL_HEIGHT / 2, tall), draw=draw,
     )

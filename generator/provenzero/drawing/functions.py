@@ -7,13 +7,13 @@ from provenzero.drawing.block import Block, Tap
 from provenzero.drawing.canvas import BOX_MARGIN, Canvas
 from provenzero.drawing.cells import ROOM, Cell, outlet
 from provenzero.drawing.fourway import LEVER, PORT_LEFT, PORT_RIGHT, SIDE, four_way
-from provenzero.drawing.metric import broken
+from provenzero.drawing.metric import broken, width_mm
 from provenzero.drawing.model import Anchor, Kind, Text
 from provenzero.drawing.movers import Movers, movers
 from provenzero.drawing.pumps import elements, fittings
 from provenzero.drawing.row import Row
 from provenzero.drawing.scene import Scene
-from provenzero.drawing.symbols import cylinder
+from provenzero.drawing.symbols import CYLINDER_LONG, cylinder
 from provenzero.drawing.tags import (
     LOCK_HALF,
     PITCH,
@@ -30,21 +30,30 @@ from provenzero.drawing.tags import (
 from provenzero.network.model import LineId
 from provenzero.unit.model import RESERVOIR, RETURNS, Function
 
-_CLOSE_RUN = 4.4
-_VALVE_TOP = 7.9
-_SUPPLY_RUN = _VALVE_TOP + SIDE + 3.2
-_CYLINDER = 16.4
-_CYLINDER_PORTS = (2.0, 12.2)
-_LABEL_ROOM = 4.0
-_TITLE_BOTTOM = 5.8
+_CLOSE_RUN = 3.9
+_VALVE_TOP = 6.9
+_VALVE_BOTTOM = _VALVE_TOP + SIDE
+_SUPPLY_RUN = _VALVE_BOTTOM + 2.4
+_APART = 2.4
+_CYLINDER = CYLINDER_LONG + 4.0
+_CYLINDER_PORTS = (1.4, 9.8)
+_LABEL_ROOM = 3.2
+_LABEL_MM = 36.0
+_TITLE_BOTTOM = 5.9
+_WIDEST = 78.0
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class _Plan:
-    """Where the parts of a function lie, from its left end and the height of its opening line [mm]."""
+    """Where the parts of a function lie, from its left end and the height of its opening line [mm].
+
+    `row_at`: the height of the supply row. `turn`: where the supply comes up if its row lies under the valve.
+    """
 
     row: Row
-    row_end: float
+    row_at: float
+    turn: float | None
+    supply: float
     valve: float
     movers: Movers
     mover: float
@@ -59,11 +68,12 @@ class _Plan:
     down: float
 
 
-def function_block(scene: Scene, item: Function, limit_mm: float, silent: frozenset[LineId]) -> Block:
+def function_block(scene: Scene, item: Function, silent: frozenset[LineId]) -> Block:
     """One function from its supply to its cylinder."""
-    plan = _measure(scene, item, limit_mm, silent)
-    feed = LineId(item.fed_from)
-    taps = [Tap(feed, _SUPPLY_RUN)]
+    plan = _measure(scene, item, silent, under=False)
+    if plan.width > _WIDEST and item.valve.supply:
+        plan = _measure(scene, item, silent, under=True)
+    taps = [Tap(LineId(item.fed_from), plan.row_at)]
     if scene.unit.common_returns:
         taps.append(Tap(LineId(RETURNS), plan.returns))
 
@@ -75,37 +85,44 @@ def function_block(scene: Scene, item: Function, limit_mm: float, silent: frozen
     )
 
 
-def _measure(scene: Scene, item: Function, limit_mm: float, silent: frozenset[LineId]) -> _Plan:
+def _measure(scene: Scene, item: Function, silent: frozenset[LineId], *, under: bool) -> _Plan:
     feed = LineId(item.fed_from)
-    row = Row(scene, feed, elements(scene, item.valve.supply, feed, tags_above=True), limit_mm=limit_mm, silent=silent)
     title = _title(scene, item)
     margin = 0.0 if title.lock is None else BOX_MARGIN
-    crowded = row.width > 0.0 and _SUPPLY_RUN - row.up < _TITLE_BOTTOM + 0.4
-    needed = (row.width if crowded else 0.0) + _title_width(title) + 1.6 - SIDE - PORT_LEFT
-    valve = max(row.width + LEVER + margin + 0.6, needed)
+    row = Row(
+        scene, feed, elements(scene, item.valve.supply, feed), limit_mm=_WIDEST - 8.0, silent=silent,
+        run_out=LEVER + SIDE + PORT_LEFT,
+    )
+    before = 0.0 if under else row.width
+    crowded = before > 0.0 and _SUPPLY_RUN - row.up < _TITLE_BOTTOM + 0.4
+    needed = (before if crowded else 0.0) + _title_width(title) + 1.4 - SIDE - PORT_LEFT
+    valve = max(before + LEVER + margin + 0.6, needed)
     end = movers(scene, item)
     mover = valve + 3 * SIDE + margin
-    at = mover + end.width + 1.6
+    at = mover + end.width + 1.2
     above, _ = _side_by_side(fittings(scene, item.open_fittings, LineId(f"{item.name}.open")), at)
-    below, at = _side_by_side(
-        fittings(scene, item.close_fittings, LineId(f"{item.name}.close"), below=True), at
-    )
-    returns = _SUPPLY_RUN + row.out + max(row.down - row.out, 0.9) + 1.4
+    below, at = _side_by_side(fittings(scene, item.close_fittings, LineId(f"{item.name}.close"), below=True), at)
+    turn, supply, row_at = None, _SUPPLY_RUN, _SUPPLY_RUN
+    returns = supply + row.down + 1.3
+    if under:
+        turn = max(row.width + 1.0, valve + SIDE + PORT_RIGHT + _APART)
+        supply = _VALVE_TOP + max(SIDE, end.down if turn > mover - 1.0 else 0.0) + _APART
+        returns = supply + _APART
+        row_at = returns + row.up + 1.2
+    beside = turn if turn is not None else valve + SIDE + PORT_RIGHT
     floor = max(
-        returns + 0.8 if scene.unit.common_returns else _VALVE_TOP + SIDE + 9.0, _VALVE_TOP + end.down,
+        returns + 0.8 if scene.unit.common_returns else _VALVE_BOTTOM + 9.0, _VALVE_TOP + end.down, row_at + row.down,
         *(_CLOSE_RUN + cell.down for cell, _ in below),
         _vent_top(end, margin) + VENT_HEIGHT if scene.vent(item.valve.tag) is not None else 0.0,
     )
-    surge, at, floor_all = _surge(scene, item, silent, at, floor)
-    lines = broken(item.label, TAG_MM, _CYLINDER + 2 * _LABEL_ROOM - 1.0, bold=True)
-    reach = at + _LABEL_ROOM
-    open_end = max((x + cell.right for cell, x in above), default=0.0) - _CYLINDER_PORTS[1] - 1.0
-    reach = max(reach, open_end)
+    surge, at, bottom = _surge(scene, item, silent, max(at, beside), floor)
+    reach = max(at + _LABEL_ROOM, max((x + c.right for c, x in above), default=0.0) - _CYLINDER_PORTS[1] + 1.0)
+    right = reach + _CYLINDER + _LABEL_ROOM
+    lines = broken(item.label, TAG_MM, min(_LABEL_MM, right - mover - max(end.clear, 8.0) - 1.0, right - at), bold=True)
     return _Plan(
-        row=row, row_end=row.width, valve=valve, movers=end, mover=mover, above=above, below=below, surge=surge,
-        cylinder=reach, returns=returns, label=lines, width=reach + _CYLINDER + _LABEL_ROOM,
-        up=max(0.8, *(cell.up for cell, _ in above)) if above else 0.8,
-        down=max(floor_all, _VALVE_TOP + SIDE + 0.6 + len(lines) * PITCH),
+        row=row, row_at=row_at, turn=turn, supply=supply, valve=valve, movers=end, mover=mover, above=above, below=below,
+        surge=surge, cylinder=reach, returns=returns, label=lines, width=right,
+        up=max([0.8, *(cell.up for cell, _ in above)]), down=max(bottom, _VALVE_BOTTOM + 0.6 + len(lines) * PITCH),
     )
 
 
@@ -150,19 +167,21 @@ def _draw(canvas: Canvas, scene: Scene, item: Function, plan: _Plan, at: tuple[f
     supply, tank = scene.port(item.name, "supply"), scene.port(item.name, "return")
     if supply is None or tank is None:
         raise ValueError(f"{item.name} has no supply or no return")
-    top, bottom = y + _VALVE_TOP, y + _VALVE_TOP + SIDE
+    top, bottom = y + _VALVE_TOP, y + _VALVE_BOTTOM
     locked = scene.lock(item.valve.tag) is not None
     canvas.symbol(
         four_way(item.valve.centre, scene.position(item.valve.tag)), (x + plan.valve, top), item.valve.tag, boxed=locked
     )
-    plan.row.draw(canvas, x, y + _SUPPLY_RUN, left)
-    canvas.wire(supply, (left, y + _SUPPLY_RUN + plan.row.out), (left, bottom))
+    end = left if plan.turn is None else x + plan.turn
+    level = y + plan.row_at
+    plan.row.draw(canvas, x, level, end)
+    canvas.wire(supply, (end, level + plan.row.out), (end, y + plan.supply), (left, y + plan.supply), (left, bottom))
     plan.movers.draw(canvas, x + plan.mover, top)
     _draw_title(canvas, _title(scene, item), left - 1.0, y, item.valve.tag)
     _draw_return(canvas, scene, item, tank, (x, y), (right, bottom, y + plan.returns))
     where = scene.vent(item.valve.tag)
     if where is not None:
-        corner = (right + 2.4, y + _vent_top(plan.movers, BOX_MARGIN if locked else 0.0))
+        corner = ((right if plan.turn is None else x + plan.turn) + 1.6, y + _vent_top(plan.movers, BOX_MARGIN if locked else 0.0))
         vent_mark(canvas, scene, where, corner, item.valve.tag)
     _draw_lines(canvas, scene, item, plan, (x, y))
     _draw_cylinder(canvas, scene, item, plan, (x, y))
@@ -219,6 +238,8 @@ def _draw_cylinder(canvas: Canvas, scene: Scene, item: Function, plan: _Plan, at
     )
     for words, place, anchor in letters:
         canvas.add(Kind.TAG, (Text(at=(place, top - 0.7), words=words, size_mm=2.4, anchor=anchor),), item.name)
+    half = max(width_mm(words, TAG_MM, bold=True) for words in plan.label) / 2
+    middle = min(left + CYLINDER_LONG / 2, x + plan.width - half)
     for number, words in enumerate(plan.label):
-        base = (left + _CYLINDER / 2, top + SIDE + 0.6 + 2.0 + number * PITCH)
+        base = (middle, top + SIDE + 0.6 + 2.0 + number * PITCH)
         canvas.add(Kind.TAG, (Text(at=base, words=words, size_mm=TAG_MM, bold=True),), item.name)

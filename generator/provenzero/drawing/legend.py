@@ -8,16 +8,16 @@ from provenzero.drawing.scene import Scene
 from provenzero.drawing.symbols import box, ring, shut_off, words
 from provenzero.drawing.tags import down_arrow, lozenge_shapes, word_shapes
 
-_SIZE = 2.5
+_SIZE = 2.4
 _SAMPLE = 17.0
-_ROW = 5.0
-_PAD = 1.2
+_ROW = 4.3
+_PAD = 0.8
 
 
 def legend_block(scene: Scene, width: float, sheet: str) -> Block:
     """The legend in a frame of a given width; `sheet` says which sheet it is, empty if there is only one."""
     entries = _entries(scene)
-    wide = _SAMPLE + 1.2 + max(width_mm(text, _SIZE) for _, text in entries) + 2.0
+    wide = _SAMPLE + 1.2 + max(width_mm(text, _SIZE) for _, text in entries) + 1.0
     columns = max(1, min(len(entries), int((width - 2 * _PAD) / wide)))
     rows = -(-len(entries) // columns)
     head = 3.4 if sheet else 0.0

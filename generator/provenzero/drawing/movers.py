@@ -16,16 +16,21 @@ from provenzero.unit.model import Function, Panel, PanelKind
 
 PITCH = 3.9
 _CELL = 2.8
-_STUB = 2.6
+_STUB = 2.2
 _PLATE_HALF = 1.7
+_UNDER = 0.4
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Movers:
-    """The movers at the right end of a valve. `down`: how far they reach under the top of the valve [mm]."""
+    """The movers at the right end of a valve. `down`: how far they reach under the top of the valve [mm].
+
+    `clear`: from where, to the right, nothing of them reaches under the valve [mm].
+    """
 
     width: float
     down: float
+    clear: float
     draw: Callable[[Canvas, float, float], None]
 
 
@@ -42,7 +47,9 @@ def movers(scene: Scene, item: Function) -> Movers:
         pilots.draw(canvas, x, y)
         power.draw(canvas, x, y + pilots.down)
 
-    return Movers(width=max(pilots.width, power.width), down=pilots.down + power.down, draw=draw)
+    down = pilots.down + power.down
+    clear = max(pilots.clear, power.width if down > SIDE + _UNDER else 0.0)
+    return Movers(width=max(pilots.width, power.width), down=down, clear=clear, draw=draw)
 
 
 def _face(panel: Panel) -> Symbol:
@@ -68,7 +75,8 @@ def _stack(scene: Scene, item: Function, panels: list[Panel]) -> Movers:
             canvas.symbol(pilot_cell(PITCH), (x, top))
             _commanded(canvas, scene, item, panel, (x + _CELL, x + _CELL + _STUB, top + PITCH / 2))
 
-    return Movers(width=_CELL + _STUB + width if panels else 0.0, down=len(panels) * PITCH, draw=draw)
+    wide, down = _CELL + _STUB + width if panels else 0.0, len(panels) * PITCH
+    return Movers(width=wide, down=down, clear=wide if down > SIDE + _UNDER else 0.0, draw=draw)
 
 
 def _wide(scene: Scene, panel: Panel, line: LineId) -> float:
@@ -111,8 +119,10 @@ def _isolated(scene: Scene, item: Function, panels: list[Panel]) -> Movers:
             height = level + (place - (len(panels) - 1) / 2) * PITCH
             _commanded(canvas, scene, item, panel, (x + reach + part.symbol.body.right, x + faces, height))
 
+    low = middle + len(panels) * PITCH / 2 > SIDE + _UNDER
     return Movers(
-        width=faces + wide, down=max(middle + half, middle + part.body.bottom + part.words.reach, SIDE) + 0.2, draw=draw
+        width=faces + wide, down=max(middle + half, middle + part.body.bottom + part.words.reach, SIDE) + 0.2,
+        clear=faces + wide if low else reach + part.right, draw=draw,
     )
 
 
@@ -138,4 +148,5 @@ def _powered(scene: Scene, panels: list[Panel]) -> Movers:
             canvas.wire(scene.port(panel.tag, "power") or LineId(""), (x + _CELL, middle), (x + _CELL + _STUB, middle))
             canvas.symbol(_face(panel), (x + _CELL + _STUB, middle))
 
-    return Movers(width=_CELL + _STUB + width if panels else 0.0, down=len(panels) * PITCH, draw=draw)
+    wide, down = _CELL + _STUB + width if panels else 0.0, len(panels) * PITCH
+    return Movers(width=wide, down=down, clear=wide if down > SIDE + _UNDER else 0.0, draw=draw)

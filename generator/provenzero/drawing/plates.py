@@ -3,41 +3,41 @@
 from provenzero.drawing.canvas import Canvas
 from provenzero.drawing.cells import ROOM, Cell
 from provenzero.drawing.metric import broken, width_mm
-from provenzero.drawing.model import Box, Fill, Kind, Pen, Polygon, Rect, Shape, Text
+from provenzero.drawing.model import Box, Fill, Kind, Pen, Point, Polygon, Rect, Text
 from provenzero.drawing.scene import Scene
 from provenzero.drawing.symbols import Symbol
 from provenzero.drawing.tags import PITCH, TAG_MM, label, label_width
 from provenzero.network.model import LineId
 
-FLAG_HALF = 1.8
 _TIP = 1.4
-
-
-def flag_width(words: str) -> float:
-    """Width of a flag [mm]."""
-    return width_mm(words, TAG_MM) + 1.2 + _TIP
+_FLAG_MM = 19.0
+_FLAG_PITCH = 2.8
 
 
 def from_flag(words: str) -> Symbol:
     """A flag that says where a line comes from; the line leaves its tip, which is the origin."""
-    width = flag_width(words)
-    outline = ((-width, -FLAG_HALF), (-_TIP, -FLAG_HALF), (0.0, 0.0), (-_TIP, FLAG_HALF), (-width, FLAG_HALF))
-    return _flag(words, outline, -width + 0.6, Box(-width, -FLAG_HALF, 0.0, FLAG_HALF))
+    width, half, lines = _flag_size(words)
+    outline = ((-width, -half), (-_TIP, -half), (0.0, 0.0), (-_TIP, half), (-width, half))
+    return _flag(lines, outline, -width + 0.6, Box(-width, -half, 0.0, half))
 
 
 def to_flag(words: str) -> Symbol:
     """A flag that says where a line goes to; the line meets its flat end, which is the origin."""
-    width = flag_width(words)
-    outline = ((0.0, -FLAG_HALF), (width - _TIP, -FLAG_HALF), (width, 0.0), (width - _TIP, FLAG_HALF), (0.0, FLAG_HALF))
-    return _flag(words, outline, 0.6, Box(0.0, -FLAG_HALF, width, FLAG_HALF))
+    width, half, lines = _flag_size(words)
+    outline = ((0.0, -half), (width - _TIP, -half), (width, 0.0), (width - _TIP, half), (0.0, half))
+    return _flag(lines, outline, 0.6, Box(0.0, -half, width, half))
 
 
-def _flag(words: str, outline: tuple[tuple[float, float], ...], left: float, body: Box) -> Symbol:
-    middle = left + width_mm(words, TAG_MM) / 2
-    shapes: tuple[Shape, ...] = (
-        Polygon(points=outline, pen=Pen.SYMBOL, fill=Fill.PAPER), Text(at=(middle, 0.95), words=words, size_mm=TAG_MM)
-    )
-    return Symbol(shapes=shapes, body=body)
+def _flag_size(words: str) -> tuple[float, float, tuple[str, ...]]:
+    lines = broken(words, TAG_MM, _FLAG_MM)
+    return max(width_mm(line, TAG_MM) for line in lines) + 1.2 + _TIP, (len(lines) * _FLAG_PITCH + 0.8) / 2, lines
+
+
+def _flag(lines: tuple[str, ...], outline: tuple[Point, ...], left: float, body: Box) -> Symbol:
+    middle = left + max(width_mm(line, TAG_MM) for line in lines) / 2
+    top = -(len(lines) - 1) * _FLAG_PITCH / 2 + 0.95
+    texts = [Text(at=(middle, top + place * _FLAG_PITCH), words=line, size_mm=TAG_MM) for place, line in enumerate(lines)]
+    return Symbol(shapes=(Polygon(points=outline, pen=Pen.SYMBOL, fill=Fill.PAPER), *texts), body=body)
 
 
 def plate(words: str, limit_mm: float, *, bold: bool = False, half_mm: float = 0.0) -> Symbol:

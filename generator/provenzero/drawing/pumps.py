@@ -12,16 +12,15 @@ from provenzero.network.devices.pumps import LIQUID
 from provenzero.network.model import LineId
 from provenzero.unit.model import CheckValve, Drive, Element, Fitting, Pump
 
-_DRIVE_RISE = 9.6
+_SHAFT = 1.5
 
 
 def pump_block(scene: Scene, item: Pump, limit_mm: float, silent: frozenset[LineId]) -> Block:
     """One pump with everything between its suction and its delivery."""
     cells = elements(scene, item.suction, LIQUID)
-    before = sum(cell.left + cell.right for cell in cells) if all(c.body is not None for c in cells) else 0.0
     suction = scene.port(item.tag, "suction") or LIQUID
     discharge = scene.port(item.tag, "discharge") or LineId(item.delivers_to)
-    cells.append(_pump_cell(scene, item, suction, discharge, before))
+    cells.append(_pump_cell(scene, item, suction, discharge, cells))
     rest = item.discharge
     if rest and isinstance(rest[0], CheckValve):
         cells.append(device_cell(scene, rest[0].tag, check_valve(), discharge, discharge))
@@ -34,13 +33,13 @@ def pump_block(scene: Scene, item: Pump, limit_mm: float, silent: frozenset[Line
     )
 
 
-def elements(scene: Scene, run: tuple[Element, ...], start: LineId, *, tags_above: bool = False) -> list[Cell]:
+def elements(scene: Scene, run: tuple[Element, ...], start: LineId) -> list[Cell]:
     """The cells of a run: what the fluid goes through, and what stands on the line where it has come to."""
     cells: list[Cell] = []
     here = start
     for element in run:
         if isinstance(element, Inline):
-            cells.append(through(scene, element, tags_above=tags_above))
+            cells.append(through(scene, element))
             here = cells[-1].line_out
         else:
             cells.append(standing(scene, element, here))
@@ -52,24 +51,28 @@ def fittings(scene: Scene, items: tuple[Fitting, ...], line: LineId, *, below: b
     return [standing(scene, item, line, below=below) for item in items]
 
 
-def _pump_cell(scene: Scene, item: Pump, suction: LineId, discharge: LineId, before: float) -> Cell:
+def _pump_cell(scene: Scene, item: Pump, suction: LineId, discharge: LineId, before: list[Cell]) -> Cell:
+    """The pump, what drives it under it, and the way of the energy under the suction."""
     words = tag(item.tag)
     energy = _energy(scene, item)
     half = max(words.width / 2 + ROOM, PUMP_RADIUS + LEAD)
-    needed = 0.0 if energy is None else energy.width + DRIVE_RADIUS + ROOM - before
+    rise, left = PUMP_RADIUS + _SHAFT + DRIVE_RADIUS, half
+    if energy is not None:
+        left = max(half, energy.width + DRIVE_RADIUS + ROOM - sum(cell.left + cell.right for cell in before))
+        rise = max(rise, max((cell.down for cell in before), default=0.0) + energy.up + 0.5)
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
         body = canvas.symbol(pump(), (x, y), item.tag)
-        words.below(canvas, x, body, item.tag)
-        canvas.symbol(shaft(_DRIVE_RISE - PUMP_RADIUS - DRIVE_RADIUS), (x, y - PUMP_RADIUS))
-        canvas.symbol(drive(item.drive), (x, y - _DRIVE_RISE))
+        words.above(canvas, x, body, item.tag)
+        canvas.symbol(shaft(rise - PUMP_RADIUS - DRIVE_RADIUS), (x, y + rise - DRIVE_RADIUS))
+        canvas.symbol(drive(item.drive), (x, y + rise))
         if energy is not None:
-            energy.draw(canvas, x - DRIVE_RADIUS, y - _DRIVE_RISE)
+            energy.draw(canvas, x - DRIVE_RADIUS, y + rise)
 
     return Cell(
-        left=max(half, needed), right=half, up=_DRIVE_RISE + max(DRIVE_RADIUS, 0.0 if energy is None else energy.up),
-        down=PUMP_RADIUS + words.reach, line_in=suction, line_out=discharge, body=(-PUMP_RADIUS, PUMP_RADIUS),
-        clear=-PUMP_RADIUS, paint=paint,
+        left=left, right=half, up=PUMP_RADIUS + words.reach,
+        down=rise + max(DRIVE_RADIUS, 0.0 if energy is None else energy.down), line_in=suction, line_out=discharge,
+        body=(-PUMP_RADIUS, PUMP_RADIUS), clear=-PUMP_RADIUS, paint=paint,
     )
 
 

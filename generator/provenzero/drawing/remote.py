@@ -4,7 +4,7 @@ from provenzero.drawing.block import Block, Tap
 from provenzero.drawing.canvas import Canvas
 from provenzero.drawing.cells import LEAD, ROOM, Cell
 from provenzero.drawing.feed import Feed, feed
-from provenzero.drawing.plates import flag_width, from_flag, plate, to_flag
+from provenzero.drawing.plates import from_flag, plate, to_flag
 from provenzero.drawing.pumps import elements, fittings
 from provenzero.drawing.row import Row
 from provenzero.drawing.scene import AIR, Scene
@@ -30,7 +30,7 @@ def air_block(scene: Scene, item: AirSupply, limit_mm: float, silent: frozenset[
     told = scene.told(AIR)
     after = LEAD + (label_width(told) + 1.0 if told else 0.0)
     row = Row(scene, start, cells, limit_mm=limit_mm - 24.0, silent=silent | {AIR})
-    lead = flag_width(scene.wording.rig_air)
+    lead = -source.body.left
 
     def draw(canvas: Canvas, x: float, y: float, _: float) -> None:
         canvas.symbol(source, (x + lead, y))
@@ -40,7 +40,7 @@ def air_block(scene: Scene, item: AirSupply, limit_mm: float, silent: frozenset[
         label(canvas, scene, AIR, (end - after / 2, y + row.out))
         canvas.symbol(goes, (end, y + row.out))
 
-    width = lead + LEAD + row.width + after + flag_width(scene.wording.air)
+    width = lead + LEAD + row.width + after + goes.body.right
     return Block(names=("air",), width=width, up=max(row.up, 2.0), down=max(row.down, row.out + 2.0), draw=draw)
 
 

@@ -1,57 +1,51 @@
-"""Cells side by side on a line, on as many levels as the width allows, with the words that must stand on their lines."""
+"""Cells side by side on a line, on as many levels as the width allows, with room for the words that must stand on it."""
 
-from dataclasses import dataclass, field
+from dataclasses import dataclass, field, replace
 
 from provenzero.drawing.canvas import Canvas
 from provenzero.drawing.cells import Cell
 from provenzero.drawing.model import Point
 from provenzero.drawing.scene import Scene
-from provenzero.drawing.tags import LABEL_HEIGHT, label, label_width, leader
+from provenzero.drawing.tags import label, label_width
 from provenzero.network.model import LineId
 
-_TURN = 1.6
+_TURN = 1.8
 _APART = 0.8
-_BANDS = 2
+_OFF_DOT = 1.0
 
 
 @dataclass(slots=True)
 class _Level:
     cells: list[Cell]
     offset: float
-    tags_down: float
-    words_down: float
-    taken: list[tuple[float, float, int]] = field(default_factory=list)
-
-    @property
-    def down(self) -> float:
-        return self.tags_down + self.words_down
+    down: float
 
 
 @dataclass(slots=True)
 class _Stretch:
-    """A piece of one line from device to device: its corners, where a leader may leave it, where a word fits on it."""
+    """A piece of one line from device to device: its corners, and where a word fits on it (left, right, level)."""
 
     line: LineId
     points: list[Point]
-    leaders: list[tuple[float, int]] = field(default_factory=list)
     free: list[tuple[float, float, int]] = field(default_factory=list)
 
 
 class Row:
     """A row of cells from one end to the other. `first`: the line at its left end. `silent`: lines named elsewhere.
 
-    `from_first`: the line begins under the first cell and not at the left end.
+    `from_first`: the line begins under the first cell and not at the left end. `run_out`: free line after the last cell.
     """
 
-    def __init__(
+    def __init__(  # noqa: PLR0913 - a row is its cells and its two ends
         self, scene: Scene, first: LineId, cells: list[Cell], *, limit_mm: float, silent: frozenset[LineId],
-        from_first: bool = False,
+        from_first: bool = False, run_out: float = 0.0,
     ) -> None:
         self._scene = scene
         self._first = first
         self._silent = silent
-        self._begin = cells[0].left if from_first and cells else 0.0
-        self._levels = self._spread(cells, limit_mm)
+        roomy = self._with_room(cells, run_out, -cells[0].left if from_first and cells else 0.0)
+        self._begin = roomy[0].left if from_first and roomy else 0.0
+        self._levels = _spread(roomy, limit_mm)
         self.width = max(_width(level.cells) for level in self._levels)
         if len(self._levels) > 1:
             self.width += _TURN
@@ -63,73 +57,82 @@ class Row:
     def draw(self, canvas: Canvas, x: float, y: float, end: float) -> None:
         """Draw the row from x at the height y; its last line goes on to the end."""
         begin = x + self._begin
-        stretch = _Stretch(self._first, [(begin, y)], [(begin, 0)])
+        stretch = _Stretch(self._first, [(begin, y)])
+        done: list[_Stretch] = []
         clear = begin
         for number, level in enumerate(self._levels):
             here, base = x, y + level.offset
             if number:
                 above = self._levels[number - 1]
                 turn = y + above.offset + above.down + _TURN / 2
-                right = x + self.width - 0.4
+                right = x + self.width - 0.5
+                stretch.free.append((clear, right - _OFF_DOT, number - 1))
                 stretch.points += [(right, y + above.offset), (right, turn), (x, turn), (x, base)]
-                clear = x
+                clear = x + _OFF_DOT
             for cell in level.cells:
                 at = here + cell.left
+                stretch.free.append((clear, at + (cell.clear if cell.body is not None else -_OFF_DOT), number))
+                clear = at + _OFF_DOT
                 if cell.body is not None:
-                    stretch.free.append((clear, at + cell.clear, number))
                     stretch.points.append((at + cell.body[0], base))
-                    self._finish(canvas, stretch, x, y)
+                    done.append(stretch)
                     stretch = _Stretch(cell.line_out, [(at + cell.body[1], base)])
-                    clear = at + cell.body[1] + 1.0
-                else:
-                    stretch.free.append((clear, at - 1.0, number))
-                    clear = at + 1.0
+                    clear = at + cell.body[1] + _OFF_DOT
                 cell.paint(canvas, at, base)
                 here = at + cell.right
-                stretch.leaders.append((here, number))
         stretch.free.append((clear, end, len(self._levels) - 1))
         stretch.points.append((end, y + self.out))
-        self._finish(canvas, stretch, x, y)
+        self._put(canvas, [*done, stretch], y)
 
-    def _spread(self, cells: list[Cell], limit_mm: float) -> list[_Level]:
-        groups: list[list[Cell]] = [[]]
-        for cell in cells:
-            if groups[-1] and _width(groups[-1]) + cell.left + cell.right > limit_mm:
-                groups.append([])
-            groups[-1].append(cell)
-        levels: list[_Level] = []
-        for group in groups:
-            offset = 0.0
-            if levels:
-                offset = levels[-1].offset + levels[-1].down + _TURN + max(cell.up for cell in group)
-            tags_down = max((cell.down for cell in group), default=0.5)
-            levels.append(_Level(group, offset, tags_down, self._words_down(group)))
-        return levels
+    def _put(self, canvas: Canvas, stretches: list[_Stretch], y: float) -> None:
+        best: dict[LineId, tuple[float, float, int]] = {}
+        for stretch in stretches:
+            canvas.wire(stretch.line, *stretch.points)
+            for piece in stretch.free:
+                if stretch.line not in best or piece[1] - piece[0] > best[stretch.line][1] - best[stretch.line][0]:
+                    best[stretch.line] = piece
+        for line, (left, right, number) in best.items():
+            if line not in self._silent:
+                label(canvas, self._scene, line, ((left + right) / 2, y + self._levels[number].offset))
 
-    def _words_down(self, cells: list[Cell]) -> float:
-        lines = {line for cell in cells for line in (cell.line_in, cell.line_out)} - self._silent
-        told = sum(bool(self._scene.told(line)) for line in lines)
-        return (LABEL_HEIGHT + 0.5) * min(told, _BANDS)
+    def _with_room(self, cells: list[Cell], run_out: float, clear: float) -> list[Cell]:
+        """The cells, moved apart where a word must stand between them and does not fit."""
+        found = list(cells)
+        best: dict[LineId, tuple[float, int]] = {}
+        line = self._first
+        for place, cell in enumerate(cells):
+            free = clear + cell.left + (cell.clear if cell.body is not None else -_OFF_DOT)
+            if line not in best or free > best[line][0]:
+                best[line] = (free, place)
+            clear = cell.right - _OFF_DOT - (0.0 if cell.body is None else cell.body[1])
+            line = cell.line_out
+        if cells and (line not in best or clear + run_out > best[line][0]):
+            best[line] = (clear + run_out, len(cells))
+        for told, (free, place) in best.items():
+            words = self._scene.told(told)
+            short = label_width(words) + _APART - free
+            if not words or told in self._silent or short <= 0.0:
+                continue
+            if place < len(cells):
+                found[place] = replace(found[place], left=found[place].left + short)
+            else:
+                found[-1] = replace(found[-1], right=found[-1].right + short)
+        return found
 
-    def _finish(self, canvas: Canvas, stretch: _Stretch, x: float, y: float) -> None:
-        canvas.wire(stretch.line, *stretch.points)
-        words = self._scene.told(stretch.line)
-        if not words or stretch.line in self._silent:
-            return
-        width = label_width(words)
-        roomy = max(stretch.free, key=lambda piece: piece[1] - piece[0])
-        if roomy[1] - roomy[0] >= width + _APART:
-            middle = (roomy[0] + roomy[1]) / 2
-            label(canvas, self._scene, stretch.line, (middle, y + self._levels[roomy[2]].offset))
-            return
-        at, number = stretch.leaders[0]
-        level = self._levels[number]
-        left = min(max(at - width / 2, x), max(x, x + self.width - width))
-        band = next(b for b in range(9) if all(b != o or left > r + _APART or left + width + _APART < s for s, r, o in level.taken))
-        level.taken.append((left, left + width, band))
-        top = y + level.offset + level.tags_down + 0.4 + band * (LABEL_HEIGHT + 0.5)
-        leader(canvas, stretch.line, (at, y + level.offset), (at, top))
-        label(canvas, self._scene, stretch.line, (left + width / 2, top + LABEL_HEIGHT / 2))
+
+def _spread(cells: list[Cell], limit_mm: float) -> list[_Level]:
+    groups: list[list[Cell]] = [[]]
+    for cell in cells:
+        if groups[-1] and _width(groups[-1]) + cell.left + cell.right > limit_mm:
+            groups.append([])
+        groups[-1].append(cell)
+    levels: list[_Level] = []
+    for group in groups:
+        offset = 0.0
+        if levels:
+            offset = levels[-1].offset + levels[-1].down + _TURN + max(cell.up for cell in group)
+        levels.append(_Level(group, offset, max((cell.down for cell in group), default=0.5)))
+    return levels
 
 
 def _width(cells: list[Cell]) -> float:

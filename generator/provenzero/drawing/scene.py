@@ -63,7 +63,10 @@ class Scene:
             LineId(HEADER): self.wording.header, LineId(RETURNS): self.wording.returns, LIQUID: self.wording.suction,
             AIR: self.wording.air,
         }
-        return fixed.get(line) or self.wording.pressure_line.format(name=line)
+        words = fixed.get(line)
+        if words is None:
+            words = line if line.lower().endswith(self.wording.line) else self.wording.pressure_line.format(name=line)
+        return words
 
 
 def letters_of(unit: Unit) -> dict[LineId, str]:

@@ -31,6 +31,7 @@ REGULATOR_HALF = 2.9
 TANK_TOP = 1.4
 BOTTLE_HALF = 2.25
 BOTTLE_HEIGHT = 9.0
+CYLINDER_LONG = 11.4
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -121,8 +122,8 @@ def drive(kind: Drive) -> Symbol:
         case Drive.DIESEL:
             return Symbol(shapes=(box(-r, -r, r, r), words((0, 1.0), "E")), body=body)
         case Drive.HAND:
-            shapes = (stroke((0, r), (0, 0.4), (-2.2, -1.6)), Circle(centre=(-2.4, -1.8), radius=0.5, pen=Pen.SYMBOL, fill=Fill.INK))
-            return Symbol(shapes=shapes, body=body)
+            knob = Circle(centre=(2.2, 1.6), radius=0.5, pen=Pen.SYMBOL, fill=Fill.INK)
+            return Symbol(shapes=(stroke((0, -r), (0, 0), (2.0, 1.4)), knob), body=body)
 
 
 @cache
@@ -266,11 +267,11 @@ def isolator(on: bool) -> Symbol:
 @cache
 def cylinder(piston: str) -> Symbol:
     """A double-acting cylinder from the corner of its closing end; ports on top; the rod comes out to close."""
-    shapes: list[Shape] = [box(0, 0, 14, 5.6)]
-    at = {"open": 3.0, "close": 9.4}.get(piston, 6.2)
-    shapes += [box(at, 0, at + 1.4, 5.6, fill=Fill.TINT), box(at + 1.4, 2.3, at + 6.8, 3.3)]
-    shapes += [stroke((14, 2.3), (14, 3.3), pen=Pen.FINE)]
-    return Symbol(shapes=tuple(shapes), body=Box(0, 0, 16.4, 5.6))
+    at = {"open": 2.4, "close": 7.0}.get(piston, 4.7)
+    shapes = (
+        box(0, 0, CYLINDER_LONG, 5.6), box(at, 0, at + 1.4, 5.6, fill=Fill.TINT), box(at + 1.4, 2.3, at + 7.0, 3.3),
+    )
+    return Symbol(shapes=shapes, body=Box(0, 0, CYLINDER_LONG + 4.0, 5.6))
 
 
 def arrow(start: Point, end: Point, head: float = 1.2) -> tuple[Shape, ...]:

@@ -5,11 +5,12 @@ from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass, field
 from itertools import product
 
-from provenzero.network.model import FULL_OPEN, Device, DeviceTag, LineId, PassageKind
+from provenzero.network.model import FULL_OPEN, Device, DeviceKind, DeviceTag, LineId, PassageKind
 from provenzero.state.model import State, Wiring
 
 _MOVE = 0.01
 _UNHELD = 50.0
+_HANDLE = 10.0
 _MANY = 2
 _MOST_TRIED = 3
 
@@ -110,8 +111,11 @@ def way_out(  # noqa: PLR0913 - a search, its start and what it may not touch
     fixed: Mapping[DeviceTag, str],
     *,
     through_checks: bool = False,
+    to_hold: bool = True,
 ) -> list[Leg] | None:
     """The cheapest way from a line to a vent through sure open passages; None if there is none.
+
+    `to_hold`: the way is to be held by locks, so devices that take one are much cheaper than others.
 
     `shut` lines are not entered; `fixed` devices stand where they are put. `through_checks`: a check that opens
     outward may be used too (for a line that nobody opens: it follows the line outside it down).
@@ -132,7 +136,7 @@ def way_out(  # noqa: PLR0913 - a search, its start and what it may not touch
                     continue
                 if any(leg.device == tag and leg.position != position for leg in _legs(came, here)):
                     continue
-                total = cost + _price(device, position, state, fixed)
+                total = cost + _price(device, position, state, fixed, to_hold=to_hold)
                 if there not in came or total < came[there][0]:
                     order += 1
                     came[there] = (total, here, Leg(tag, position, there))
@@ -155,11 +159,17 @@ def _exits(
                 yield position, item.target
 
 
-def _price(device: Device, position: str, state: State, fixed: Mapping[DeviceTag, str]) -> float:
+def _price(
+    device: Device, position: str, state: State, fixed: Mapping[DeviceTag, str], *, to_hold: bool
+) -> float:
+    """What using a device costs: a lock, a move, and much for throwing a handle to its other end."""
     if not device.movable or device.tag in fixed:
         return 0.0
-    moved = _MOVE if state.positions[device.tag] != position else 0.0
-    return (1.0 if device.lockable else _UNHELD) + moved
+    moves = state.positions[device.tag] != position
+    handle = _HANDLE if moves and device.kind is DeviceKind.FOUR_WAY_VALVE and position != "centre" else 0.0
+    if not to_hold:
+        return handle + (1.0 if moves else _MOVE)
+    return handle + (1.0 if device.lockable else _UNHELD) + (_MOVE if moves else 0.0)
 
 
 def _legs(came: Mapping[LineId, tuple[float, LineId | None, Leg | None]], end: LineId) -> list[Leg]:

@@ -109,7 +109,7 @@ def let_out_rest(
         if line is None:
             break
         tried.add(line)
-        legs = way_out(wiring, state, region.outside.lines, line, fixed, through_checks=True)
+        legs = way_out(wiring, state, region.outside.lines, line, fixed, through_checks=True, to_hold=False)
         for leg in legs or []:
             if state.positions[leg.device] != leg.position:
                 effect = act(wiring, state, leg.device, leg.position)

@@ -39,17 +39,17 @@ _MARK = (
 _SHEETS = {Paper.A4: "A4", Paper.LETTER: "letter"}
 
 
-def html(document: Document, svg: str) -> str:
-    """The document as one file. `svg` is the drawing, inline; ValueError if it is anything but an SVG element."""
-    drawing = svg.strip()
-    if drawing and not (drawing.startswith("<svg") and drawing.endswith("</svg>")):
-        raise ValueError("the drawing is not an SVG element")
+def html(document: Document, *drawings: str) -> str:
+    """The document as one file, with its drawings inline; ValueError if one is anything but an SVG element."""
+    pictures = [drawing.strip() for drawing in drawings if drawing.strip()]
+    if not all(picture.startswith("<svg") and picture.endswith("</svg>") for picture in pictures):
+        raise ValueError("a drawing is not an SVG element")
     style = _style(document)
     digest = b64encode(sha256(style.encode()).digest()).decode()
     return (
         _environment()
         .get_template("document.html")
-        .render(document=document, drawing=_ours(drawing), style=_ours(style), style_hash=digest)
+        .render(document=document, drawings=[_ours(p) for p in pictures], style=_ours(style), style_hash=digest)
     )
 
 

@@ -136,7 +136,8 @@ def _begin(wiring: Wiring, group_of: Mapping[LineId, int], before: Mapping[LineI
     members: list[list[LineId]] = [[] for _ in range(count)]
     for line, number in group_of.items():
         members[number].append(line)
-    charged = {s.line for s in wiring.network.sources if s.gas and before[s.line][1] > 0.0}
+    bottles = {s.line for s in wiring.network.sources if s.gas}
+    charged = {line for line in bottles if before[line][1] > 0.0}
     groups = []
     for lines in members:
         vent = any(line in wiring.vents for line in lines)
@@ -146,7 +147,9 @@ def _begin(wiring: Wiring, group_of: Mapping[LineId, int], before: Mapping[LineI
         stiff = [line for line in lines if line in charged]
         low = min(before[line][0] for line in stiff or lines)
         high = max(before[line][1] for line in lines)
-        groups.append(_Group(low, high, vent=False, stiff=bool(stiff)))
+        # An empty bottle that trapped liquid finds takes some in, and then pushes.
+        gas = bool(stiff) or (high > 0.0 and any(line in bottles for line in lines))
+        groups.append(_Group(low, high, vent=False, stiff=gas))
     return groups
 
 

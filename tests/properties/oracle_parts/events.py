@@ -28,21 +28,24 @@ class Event:
 
 
 def events(walked: Walk) -> Iterator[Event]:
-    """Everything that the steps newly cause, in their order."""
+    """Everything that the steps newly cause, in their order.
+
+    A piston stands where it is pushed to at first; one that nothing pushes, where the plan says it does.
+    """
     circuit = walked.circuit
     before = look(circuit, walked.start, walked.start)
-    stands: dict[str, str | None] = {p.name: before.pushed.get(p.name) for p in circuit.pistons}
+    stands = dict(walked.said_pistons) | dict(before.pushed)
     for moment in walked.moments:
         if moment.after is moment.before:
             continue
         after = look(circuit, moment.before, moment.after)
         for name, end in after.pushed.items():
-            if stands[name] != end:
+            if stands.get(name) != end:
                 text = f"{name} travels to {end}"
-                yield Event(moment=moment, text=text, announced=moment.step.get("moves_function") == name)
+                yield Event(moment=moment, text=text, announced=name in _named(moment, "moves_function"))
             stands[name] = end
         for source in sorted(after.started - before.started):
-            announced = moment.step.get("starts_pump") == source
+            announced = source in _named(moment, "starts_pump")
             yield Event(moment=moment, text=f"{source} starts", announced=announced)
         for source in sorted(after.vented - before.vented):
             yield Event(moment=moment, text=f"{source} is let out to a vent", announced=False)
@@ -56,9 +59,7 @@ def look(circuit: Circuit, earlier: State, state: State) -> Glance:
     return Glance(
         pushed=_pushed(circuit, state, flows, running),
         vented=frozenset(
-            s.id
-            for s in running
-            if any(circuit.vent[k] for k in _downstream(circuit, flows, {s.line}, s.high_pag))
+            s.id for s in running if any(circuit.vent[k] for k in _downstream(circuit, flows, {s.line}, s.high_pag))
         ),
         started=_started(circuit, earlier, state),
     )
@@ -138,3 +139,8 @@ def _started(circuit: Circuit, earlier: State, state: State) -> frozenset[str]:
         low = still.pressures.low
         started |= {s.id for s in automatic if s.senses is not None and low[s.senses] < s.starts_below_pag}
     return frozenset(started)
+
+
+def _named(moment: Moment, key: str) -> list[str]:
+    """The names that a step announces, one or several with commas between."""
+    return str(moment.step.get(key) or "").split(", ")

@@ -66,7 +66,5 @@ def open_book(circuit: Circuit, locks: Sequence[Mapping[str, Any]]) -> LockBook:
             book.misuse.append(f"lock {number} is on {device}, which can't be locked")
     for key in ("number", "device"):
         values = [entry[key] for entry in locks]
-        book.misuse.extend(
-            f"two locks have the {key} {v}" for v in dict.fromkeys(values) if values.count(v) > 1
-        )
+        book.misuse.extend(f"two locks have the {key} {v}" for v in dict.fromkeys(values) if values.count(v) > 1)
     return book

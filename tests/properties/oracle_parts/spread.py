@@ -22,6 +22,12 @@ class Pressures:
     low: tuple[float, ...]
     high: tuple[float, ...]
 
+    def with_line(self, line: int, other: "Pressures") -> "Pressures":
+        """These, with one line at the pressure it has among the others."""
+        low, high = list(self.low), list(self.high)
+        low[line], high[line] = other.low[line], other.high[line]
+        return Pressures(low=tuple(low), high=tuple(high))
+
     def text(self, line: int) -> str:
         return f"[{self.low[line]:.0f}, {self.high[line]:.0f}] Pa"
 

@@ -20,9 +20,7 @@ class _Stand:
     needs: frozenset[int] | None
 
 
-def flood_every_stand(
-    circuit: Circuit, begin: frozenset[int], free: Mapping[str, Freedom]
-) -> frozenset[int] | None:
+def flood_every_stand(circuit: Circuit, begin: frozenset[int], free: Mapping[str, Freedom]) -> frozenset[int] | None:
     """The lines that come under pressure in some joint stand, remembering what earlier stands left closed in.
 
     None where there are more than `MOST_STANDS` of them.
@@ -32,9 +30,7 @@ def flood_every_stand(
         return None
     fixed = tuple(pair for c in choices if len(c) == 1 for pair in c[0].pairs)
     drives = tuple(
-        (s.drive, s.line)
-        for s in circuit.sources
-        if s.live and s.drive is not None and not circuit.vent[s.line]
+        (s.drive, s.line) for s in circuit.sources if s.live and s.drive is not None and not circuit.vent[s.line]
     )
     several = [c for c in choices if len(c) > 1]
     hot = set(begin)

@@ -42,11 +42,16 @@ class Moment:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Walk:
-    """`during_work`: what the people at the opened part rely on. `misuse`: locks that don't work out."""
+    """`during_work`: what the people at the opened part rely on. `misuse`: locks that don't work out.
+
+    `said_dead` and `said_pistons` are what the plan itself says of lines at zero and of where pistons stand.
+    """
 
     circuit: Circuit
     zone: tuple[int, ...]
     open_to_vent: tuple[int, ...]
+    said_dead: tuple[int, ...]
+    said_pistons: Mapping[str, str]
     start: State
     moments: tuple[Moment, ...]
     during_work: State
@@ -65,16 +70,19 @@ def walk(plan: Mapping[str, Any]) -> Walk:
     """
     circuit = read_circuit(plan["network"])
     book = open_book(circuit, plan["locks"])
-    start = state = _initial(circuit, plan["network"]["initial"])
+    initial = plan["network"]["initial"]
+    start = state = _initial(circuit, initial)
     moments: list[Moment] = []
     for step in plan["steps"]:
-        before, state = state, _carry_out(book, state, step)
+        before, state = state, _carry_out(book, start, state, step)
         moments.append(Moment(step=step, before=before, after=state))
     during_work = _before_work(start, moments)
     return Walk(
         circuit=circuit,
         zone=tuple(circuit.line(name) for name in plan["zone"]),
         open_to_vent=tuple(circuit.line(name) for name in plan["open_to_vent"]),
+        said_dead=tuple(circuit.line(name) for name in plan.get("dead", ())),
+        said_pistons=initial.get("pistons", {}),
         start=start,
         moments=tuple(moments),
         during_work=during_work,
@@ -95,8 +103,8 @@ def _initial(circuit: Circuit, initial: Mapping[str, Any]) -> State:
     return State(positions=positions, locks={}, settled=settle(circuit, positions, given, frozenset()))
 
 
-def _carry_out(book: LockBook, state: State, step: Step) -> State:
-    """First the lock comes off, then the device is moved, then the lock goes on."""
+def _carry_out(book: LockBook, start: State, state: State, step: Step) -> State:
+    """First the lock comes off, then the device is moved, then the lock goes on, then gas is filled in."""
     worn, positions = dict(state.locks), dict(state.positions)
     action = step.get("action")
     book.take_off(step, worn)
@@ -105,9 +113,12 @@ def _carry_out(book: LockBook, state: State, step: Step) -> State:
         book.watch_move(step, worn)
         positions[action["device"]] = action["position"]
     book.put_on(step, worn, positions)
-    if positions == state.positions and worn == state.locks:
+    pressures = state.pressures
+    if step.get("recharges") is not None:
+        pressures = pressures.with_line(book.circuit.line(step["recharges"]), start.pressures)
+    if (positions, worn, pressures) == (state.positions, state.locks, state.pressures):
         return state
-    settled = settle(book.circuit, positions, state.pressures, frozenset(worn.values()))
+    settled = settle(book.circuit, positions, pressures, frozenset(worn.values()))
     return State(positions=positions, locks=worn, settled=settled)
 
 
