@@ -141,6 +141,7 @@ def test_an_absolute_pressure_is_refused_and_the_gauge_pressure_asked_for(text: 
         ("0 Cv", Dimension.FLOW_COEFFICIENT, "0 Cv", "a flow coefficient above zero"),
         ("-300 degC", Dimension.TEMPERATURE, "at or below absolute zero", "20 degC"),
         ("1/3 in", Dimension.LENGTH, "a fraction", "only inches take halves to 64ths"),
+        ("4/4 in", Dimension.LENGTH, "a fraction", "a decimal number"),
         ("5/4 in", Dimension.LENGTH, "a fraction", "a decimal number"),
         ("1/2 m", Dimension.LENGTH, "a fraction", "a decimal number"),
         ("1/0 in", Dimension.LENGTH, "a fraction", "a decimal number"),
@@ -232,6 +233,8 @@ def test_each_site_prints_its_own_units() -> None:
     assert plain(METRIC.temperature(273.0)) == "0 °C"
     assert plain(BOTH.length(15.24)) == "50 ft (15 m)"
     assert plain(METRIC.pressure(21e6)) == "210 bar"
+    assert plain(METRIC.pressure(1e6)) == "10 bar"
+    assert plain(METRIC.volume(0.1)) == "100 L"
 
 
 def test_a_bore_is_printed_as_the_trade_says_it() -> None:
@@ -244,6 +247,8 @@ def test_a_bore_is_printed_as_the_trade_says_it() -> None:
 def test_energy_is_printed_in_kilojoule_and_from_ten_thousand_in_megajoule() -> None:
     assert plain(US.energy(518e3)) == "518 kJ"
     assert plain(US.energy(25.4e6)) == "25 MJ"
+    assert plain(US.energy(9.99e6)) == "9990 kJ"
+    assert plain(US.energy(10e6)) == "10 MJ"
     assert plain(US.energy(500.0)) == "0.50 kJ"
 
 
@@ -253,9 +258,17 @@ def test_energy_is_printed_in_kilojoule_and_from_ten_thousand_in_megajoule() -> 
         (0.0, "0 s"),
         (0.2, "1 s"),
         (30.0, "30 s"),
+        (89.4, "89 s"),
+        (90.0, "1 min 30 s"),
         (125.0, "2 min 5 s"),
         (120.0, "2 min"),
+        (599.0, "9 min 59 s"),
+        (600.0, "10 min"),
+        (610.0, "10 min"),
         (899.0, "15 min"),
+        (5400.0, "1 h 30 min"),
+        (172_800.0, "2 d"),
+        (176_400.0, "2 d 1 h"),
         (7290.0, "2 h 2 min"),
         (7200.0, "2 h"),
         (263_000.0, "3 d 1 h"),

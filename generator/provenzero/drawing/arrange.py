@@ -33,11 +33,11 @@ WIDTH_MM = 190.0
 HEIGHT_MM = 250.0
 _SUCTION_AT = 2.2
 _LEFT_AT = 4.6
-_GAP = 1.4
+_GAP = 0.8
 _TOP = 1.0
 _LEAST_TAP = 5.0
 _SHELF_GAP = 5.0
-_NARROWEST = 84.0
+_NARROW = 76.0
 
 
 @dataclass(frozen=True, slots=True)
@@ -50,11 +50,11 @@ def overview(unit: Unit, network: Network, marks: Marks, wording: Wording = ENGL
     """Draw a unit with its marks, each device once, on sheets of at most 190 by 250 mm."""
     scene = Scene(unit=unit, network=network, marks=marks, wording=wording, letters=letters_of(unit))
     silent = frozenset({*scene.letters, AIR, LineId(RESERVOIR), LineId(ATMOSPHERE)})
-    right = _right(scene, silent)
-    spent = max((block.width for block in right), default=0.0)
-    limit = max(WIDTH_MM - _LEFT_AT - width_of(_shared(unit)) - spent, _NARROWEST)
-    left = _left(scene, limit, silent)
-    sheets = _divide(scene, left, right)
+    room = WIDTH_MM - _LEFT_AT - width_of(_shared(unit))
+    narrow = _right(scene, _NARROW, silent)
+    left = _left(scene, max(room - _column(narrow), room / 2), silent)
+    wide = _right(scene, room - _column(left), silent)
+    sheets = min((_divide(scene, left, right) for right in (wide, narrow)), key=len)
     return tuple(_draw(scene, sheet, number, len(sheets)) for number, sheet in enumerate(sheets, start=1))
 
 
@@ -67,16 +67,15 @@ def _shared(unit: Unit) -> list[LineId]:
     return [LineId(name) for name in names]
 
 
-def _right(scene: Scene, silent: frozenset[LineId]) -> list[Block]:
+def _right(scene: Scene, limit: float, silent: frozenset[LineId]) -> list[Block]:
     blocks = []
     left = list(scene.unit.bypasses)
     for item in scene.unit.regulators:
-        blocks.append(regulator_block(scene, item, WIDTH_MM / 2, silent))
-        for link in [link for link in left if link.around == item.tag]:
-            blocks.append(bypass_block(scene, link, WIDTH_MM / 2, silent))
-            left.remove(link)
-    blocks += [bypass_block(scene, link, WIDTH_MM / 2, silent) for link in left]
-    blocks += [function_block(scene, item, silent) for item in scene.unit.functions]
+        around = [link for link in left if link.around == item.tag and link.to_line == item.serves]
+        left = [link for link in left if link not in around]
+        blocks.append(regulator_block(scene, item, around, limit, silent))
+    blocks += [bypass_block(scene, link, limit, silent) for link in left]
+    blocks += [function_block(scene, item, limit, silent) for item in scene.unit.functions]
     return blocks
 
 

@@ -50,8 +50,8 @@ from provenzero.unit.model import (
     Valve,
 )
 
-LEAD = 1.6
-ROOM = 0.7
+LEAD = 1.3
+ROOM = 0.6
 RISE = 5.8
 _DROP = 1.0
 
@@ -190,11 +190,11 @@ def _on_line(  # noqa: PLR0913 - a cell is its extents and its paint
 def _branch(scene: Scene, parts: list[Part], line: LineId, to: LineId | None, *, below: bool) -> Cell:
     """A stub from a line, then devices side by side, then an outlet or nothing."""
     sign = 1 if below else -1
-    places = [max(1.6 - parts[0].body.left, 0.4 + parts[0].left if below else 0.0)]
+    places = [max(1.3 - parts[0].body.left, 0.4 + parts[0].left if below else 0.0)]
     for one, other in pairwise(parts):
         apart = max(one.right + ROOM + other.left, one.body.right + LEAD - other.body.left)
         places.append(places[-1] + apart)
-    out = places[-1] + parts[-1].body.right + 1.4
+    out = places[-1] + parts[-1].body.right + 1.2
     where = scene.vent(parts[0].name)
     stub = scene.ends(parts[0].name)[1] if to is None else None
     told = scene.told(stub) if stub is not None else ""

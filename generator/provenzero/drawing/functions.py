@@ -16,7 +16,6 @@ from provenzero.drawing.scene import Scene
 from provenzero.drawing.symbols import CYLINDER_LONG, cylinder
 from provenzero.drawing.tags import (
     LOCK_HALF,
-    PITCH,
     TAG_MM,
     VENT_HEIGHT,
     Tag,
@@ -35,12 +34,12 @@ _VALVE_TOP = 6.9
 _VALVE_BOTTOM = _VALVE_TOP + SIDE
 _SUPPLY_RUN = _VALVE_BOTTOM + 2.4
 _APART = 2.4
-_CYLINDER = CYLINDER_LONG + 4.0
-_CYLINDER_PORTS = (1.4, 9.8)
-_LABEL_ROOM = 3.2
+_CYLINDER = CYLINDER_LONG + 2.6
+_CYLINDER_PORTS = (1.2, 9.0)
+_LABEL_ROOM = 3.4
 _LABEL_MM = 36.0
 _TITLE_BOTTOM = 5.9
-_WIDEST = 78.0
+_NAME_PITCH = 2.7
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -62,17 +61,18 @@ class _Plan:
     surge: tuple[tuple[Block, float, float], ...]
     cylinder: float
     returns: float
+    label_at: float
     label: tuple[str, ...]
     width: float
     up: float
     down: float
 
 
-def function_block(scene: Scene, item: Function, silent: frozenset[LineId]) -> Block:
-    """One function from its supply to its cylinder."""
-    plan = _measure(scene, item, silent, under=False)
-    if plan.width > _WIDEST and item.valve.supply:
-        plan = _measure(scene, item, silent, under=True)
+def function_block(scene: Scene, item: Function, limit_mm: float, silent: frozenset[LineId]) -> Block:
+    """One function from its supply to its cylinder; what stands in the supply goes under the valve if the width asks for it."""
+    plan = _measure(scene, item, limit_mm, silent, under=False)
+    if plan.width > limit_mm and item.valve.supply:
+        plan = _measure(scene, item, limit_mm, silent, under=True)
     taps = [Tap(LineId(item.fed_from), plan.row_at)]
     if scene.unit.common_returns:
         taps.append(Tap(LineId(RETURNS), plan.returns))
@@ -85,12 +85,14 @@ def function_block(scene: Scene, item: Function, silent: frozenset[LineId]) -> B
     )
 
 
-def _measure(scene: Scene, item: Function, silent: frozenset[LineId], *, under: bool) -> _Plan:
+def _measure(
+    scene: Scene, item: Function, limit_mm: float, silent: frozenset[LineId], *, under: bool
+) -> _Plan:
     feed = LineId(item.fed_from)
     title = _title(scene, item)
     margin = 0.0 if title.lock is None else BOX_MARGIN
     row = Row(
-        scene, feed, elements(scene, item.valve.supply, feed), limit_mm=_WIDEST - 8.0, silent=silent,
+        scene, feed, elements(scene, item.valve.supply, feed), limit_mm=limit_mm, silent=silent,
         run_out=LEVER + SIDE + PORT_LEFT,
     )
     before = 0.0 if under else row.width
@@ -118,12 +120,25 @@ def _measure(scene: Scene, item: Function, silent: frozenset[LineId], *, under: 
     surge, at, bottom = _surge(scene, item, silent, max(at, beside), floor)
     reach = max(at + _LABEL_ROOM, max((x + c.right for c, x in above), default=0.0) - _CYLINDER_PORTS[1] + 1.0)
     right = reach + _CYLINDER + _LABEL_ROOM
-    lines = broken(item.label, TAG_MM, min(_LABEL_MM, right - mover - max(end.clear, 8.0) - 1.0, right - at), bold=True)
+    beyond = max(at, beside + 1.0) if surge or below else beside + 1.0
+    label_at, lines = _label(item.label, end, mover, right, beyond)
     return _Plan(
         row=row, row_at=row_at, turn=turn, supply=supply, valve=valve, movers=end, mover=mover, above=above, below=below,
-        surge=surge, cylinder=reach, returns=returns, label=lines, width=right,
-        up=max([0.8, *(cell.up for cell, _ in above)]), down=max(bottom, _VALVE_BOTTOM + 0.6 + len(lines) * PITCH),
+        surge=surge, cylinder=reach, returns=returns, label_at=label_at, label=lines, width=right,
+        up=max([0.8, *(cell.up for cell, _ in above)]), down=max(bottom, label_at + len(lines) * _NAME_PITCH),
     )
+
+
+def _label(words: str, end: Movers, mover: float, right: float, beyond: float) -> tuple[float, tuple[str, ...]]:
+    """How deep the name of the function stands, and its lines: as high as possible, clear of the movers."""
+    best: tuple[float, float, tuple[str, ...]] | None = None
+    for depth in (SIDE, *(down for _, down in end.profile if down > SIDE)):
+        at = _VALVE_TOP + depth + 0.4
+        left = max(mover + end.clear(depth), beyond) + 0.6
+        lines = broken(words, TAG_MM, min(_LABEL_MM, right - left), bold=True)
+        if best is None or at + len(lines) * _NAME_PITCH < best[0]:
+            best = (at + len(lines) * _NAME_PITCH, at, lines)
+    return (best[1], best[2]) if best is not None else (_VALVE_BOTTOM, (words,))
 
 
 def _title(scene: Scene, item: Function) -> Tag:
@@ -233,13 +248,13 @@ def _draw_cylinder(canvas: Canvas, scene: Scene, item: Function, plan: _Plan, at
     left, top = x + plan.cylinder, y + _VALVE_TOP
     canvas.symbol(cylinder(scene.marks.pistons.get(item.name, "")), (left, top), item.name)
     letters = (
-        (scene.wording.closing, left + _CYLINDER_PORTS[0] - 0.9, Anchor.END),
-        (scene.wording.opening, left + _CYLINDER_PORTS[1] + 0.9, Anchor.START),
+        (scene.wording.closing, left + _CYLINDER_PORTS[0] - 1.5, Anchor.END),
+        (scene.wording.opening, left + _CYLINDER_PORTS[1] + 1.5, Anchor.START),
     )
     for words, place, anchor in letters:
         canvas.add(Kind.TAG, (Text(at=(place, top - 0.7), words=words, size_mm=2.4, anchor=anchor),), item.name)
     half = max(width_mm(words, TAG_MM, bold=True) for words in plan.label) / 2
     middle = min(left + CYLINDER_LONG / 2, x + plan.width - half)
     for number, words in enumerate(plan.label):
-        base = (middle, top + SIDE + 0.6 + 2.0 + number * PITCH)
+        base = (middle, y + plan.label_at + 2.0 + number * _NAME_PITCH)
         canvas.add(Kind.TAG, (Text(at=base, words=words, size_mm=TAG_MM, bold=True),), item.name)

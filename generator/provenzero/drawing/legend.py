@@ -16,7 +16,7 @@ _PAD = 0.8
 
 def legend_block(scene: Scene, width: float, sheet: str) -> Block:
     """The legend in a frame of a given width; `sheet` says which sheet it is, empty if there is only one."""
-    entries = _entries(scene)
+    entries = _entries(scene, ringed=bool(sheet) or scene.unit.common_returns)
     wide = _SAMPLE + 1.2 + max(width_mm(text, _SIZE) for _, text in entries) + 1.0
     columns = max(1, min(len(entries), int((width - 2 * _PAD) / wide)))
     rows = -(-len(entries) // columns)
@@ -39,7 +39,7 @@ def legend_block(scene: Scene, width: float, sheet: str) -> Block:
     return Block(names=(), width=width, up=0.0, down=height, draw=draw)
 
 
-def _entries(scene: Scene) -> list[tuple[tuple[Shape, ...], str]]:
+def _entries(scene: Scene, *, ringed: bool) -> list[tuple[tuple[Shape, ...], str]]:
     text = scene.wording
     marks = scene.marks
     found = set(marks.lines.values())
@@ -55,14 +55,15 @@ def _entries(scene: Scene) -> list[tuple[tuple[Shape, ...], str]]:
             line = band(points) if role is Role.ZONE else [Polyline(points=points, pen=Pen(role.value))]
             entries.append(((*line, *word_shapes(word, role, (0.0, 0.0))), meaning))
     if marks.locks:
-        valve = (*_valves((2.6,), opened=False), box(-1.1, -2.2, 6.3, 2.2, fill=Fill.NONE, pen=Pen.HEAVY))
-        entries.append(((*valve, *lozenge_shapes((-5.0, 0.0), "1")), text.legend_lock))
+        valve = (*_valves((2.6,), opened=False), box(-1.0, -2.0, 6.2, 2.0, fill=Fill.NONE, pen=Pen.HEAVY))
+        entries.append(((*valve, *lozenge_shapes((-4.6, 0.0), "1", tall=2.1)), text.legend_lock))
     if marks.open_vents:
-        entries.append(((down_arrow((0.0, -2.3), 4.6),), text.legend_vent))
+        entries.append(((down_arrow((0.0, -1.9), 3.8),), text.legend_vent))
     entries.append(((*_valves((-4.0,), opened=False), *_valves((4.0,), opened=True)), text.legend_closed))
-    square = (box(-2.1, -2.1, 2.1, 2.1, fill=Fill.TINT, pen=Pen.HEAVY),)
+    square = (box(-1.7, -1.7, 1.7, 1.7, fill=Fill.TINT, pen=Pen.HEAVY),)
     entries.append((square, text.legend_force))
-    entries.append((ring("A").shapes, text.legend_ring))
+    if ringed:
+        entries.append((ring("A").shapes, text.legend_ring))
     entries.append(((words((-2.0, 0.9), text.closing), words((2.0, 0.9), text.opening)), text.legend_chambers))
     return entries
 

@@ -16,22 +16,30 @@ from provenzero.unit.model import Function, Panel, PanelKind
 
 PITCH = 3.9
 _CELL = 2.8
-_STUB = 2.2
+_STUB = 1.8
 _PLATE_HALF = 1.7
-_UNDER = 0.4
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Movers:
-    """The movers at the right end of a valve. `down`: how far they reach under the top of the valve [mm].
+    """The movers at the right end of a valve. `profile`: (how far right, how far under the top of the valve) of its parts."""
 
-    `clear`: from where, to the right, nothing of them reaches under the valve [mm].
-    """
-
-    width: float
-    down: float
-    clear: float
+    profile: tuple[tuple[float, float], ...]
     draw: Callable[[Canvas, float, float], None]
+
+    @property
+    def width(self) -> float:
+        """How far they reach to the right [mm]."""
+        return max((right for right, _ in self.profile), default=0.0)
+
+    @property
+    def down(self) -> float:
+        """How far they reach under the top of the valve [mm]."""
+        return max((down for _, down in self.profile), default=0.0)
+
+    def clear(self, depth: float) -> float:
+        """From where, to the right, nothing of them reaches under a depth [mm]."""
+        return max((right for right, down in self.profile if down > depth), default=0.0)
 
 
 def movers(scene: Scene, item: Function) -> Movers:
@@ -47,9 +55,8 @@ def movers(scene: Scene, item: Function) -> Movers:
         pilots.draw(canvas, x, y)
         power.draw(canvas, x, y + pilots.down)
 
-    down = pilots.down + power.down
-    clear = max(pilots.clear, power.width if down > SIDE + _UNDER else 0.0)
-    return Movers(width=max(pilots.width, power.width), down=down, clear=clear, draw=draw)
+    under = tuple((right, pilots.down + down) for right, down in power.profile)
+    return Movers(profile=pilots.profile + under, draw=draw)
 
 
 def _face(panel: Panel) -> Symbol:
@@ -75,8 +82,7 @@ def _stack(scene: Scene, item: Function, panels: list[Panel]) -> Movers:
             canvas.symbol(pilot_cell(PITCH), (x, top))
             _commanded(canvas, scene, item, panel, (x + _CELL, x + _CELL + _STUB, top + PITCH / 2))
 
-    wide, down = _CELL + _STUB + width if panels else 0.0, len(panels) * PITCH
-    return Movers(width=wide, down=down, clear=wide if down > SIDE + _UNDER else 0.0, draw=draw)
+    return Movers(profile=((_CELL + _STUB + width, len(panels) * PITCH),) if panels else (), draw=draw)
 
 
 def _wide(scene: Scene, panel: Panel, line: LineId) -> float:
@@ -119,11 +125,8 @@ def _isolated(scene: Scene, item: Function, panels: list[Panel]) -> Movers:
             height = level + (place - (len(panels) - 1) / 2) * PITCH
             _commanded(canvas, scene, item, panel, (x + reach + part.symbol.body.right, x + faces, height))
 
-    low = middle + len(panels) * PITCH / 2 > SIDE + _UNDER
-    return Movers(
-        width=faces + wide, down=max(middle + half, middle + part.body.bottom + part.words.reach, SIDE) + 0.2,
-        clear=faces + wide if low else reach + part.right, draw=draw,
-    )
+    tagged = (reach + part.right, middle + part.body.bottom + part.words.reach)
+    return Movers(profile=((faces + wide, middle + len(panels) * PITCH / 2), tagged), draw=draw)
 
 
 def _gathered(scene: Scene, name: str, half: float, *, exhausts: bool) -> Symbol:
@@ -148,5 +151,4 @@ def _powered(scene: Scene, panels: list[Panel]) -> Movers:
             canvas.wire(scene.port(panel.tag, "power") or LineId(""), (x + _CELL, middle), (x + _CELL + _STUB, middle))
             canvas.symbol(_face(panel), (x + _CELL + _STUB, middle))
 
-    wide, down = _CELL + _STUB + width if panels else 0.0, len(panels) * PITCH
-    return Movers(width=wide, down=down, clear=wide if down > SIDE + _UNDER else 0.0, draw=draw)
+    return Movers(profile=((_CELL + _STUB + width, len(panels) * PITCH),) if panels else (), draw=draw)

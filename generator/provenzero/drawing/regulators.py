@@ -1,5 +1,7 @@
 """Regulators and bypasses as rows from the line that feeds them, and back under the row to the line they serve."""
 
+from collections.abc import Sequence
+
 from provenzero.drawing.block import Block, Tap
 from provenzero.drawing.canvas import BOX_MARGIN, Canvas
 from provenzero.drawing.cells import ROOM, Cell, outlet, through
@@ -7,45 +9,67 @@ from provenzero.drawing.plates import name_on, name_width, plate
 from provenzero.drawing.pumps import elements, fittings
 from provenzero.drawing.row import Row
 from provenzero.drawing.scene import AIR, Scene
-from provenzero.drawing.symbols import Symbol, regulator
+from provenzero.drawing.symbols import Symbol, regulator, ring
 from provenzero.drawing.tags import CORNER, LABEL_HEIGHT, LOCK_HALF, label, lock_half, lozenge, tag
 from provenzero.network.model import LineId
-from provenzero.unit.model import Bypass, Regulator, RegulatorControl
+from provenzero.unit.model import RESERVOIR, Bypass, Regulator, RegulatorControl
 
-_LIMB = 2.2
-_RETURN_DOWN = 8.2
+_LIMB = 1.9
+_NAME_HALF = 1.8
+_RING = 3.8
+_TANK = 2.6
 
 
-def regulator_block(scene: Scene, item: Regulator, limit_mm: float, silent: frozenset[LineId]) -> Block:
-    """One regulator, its name on the limb that goes back to the line it serves."""
+def regulator_block(
+    scene: Scene, item: Regulator, links: Sequence[Bypass], limit_mm: float, silent: frozenset[LineId]
+) -> Block:
+    """One regulator, its name on the limb that goes back to the line it serves, and the bypasses that join that limb."""
     feed, serves = LineId(item.fed_from), LineId(item.serves)
     cells = [*elements(scene, item.upstream, feed), _regulator_cell(scene, item), *fittings(scene, item.fittings, serves)]
     row = Row(scene, feed, cells, limit_mm=limit_mm, silent=silent)
-    width = max(row.width, name_width(scene, serves) + 2.0) + 1.0
-    return _back(scene, row, (item.tag,), feed, serves, width, told=True)
+    rows = [Row(scene, LineId(n.from_line), [through(scene, n.valve)], limit_mm=limit_mm, silent=silent) for n in links]
+    join = max((link.width for link in rows), default=0.0) + 1.0
+    name_at = join + 1.0 if rows else 1.0
+    width = max(row.width + 1.0, name_at + name_width(scene, serves) + 1.6)
+    limb = row.down + _LIMB
+    heights: list[float] = []
+    foot = limb + 0.6
+    for link in rows:
+        heights.append(foot + link.up)
+        foot = heights[-1] + link.down
+
+    def draw(canvas: Canvas, x: float, y: float, _: float) -> None:
+        row.draw(canvas, x, y, x + width)
+        canvas.wire(serves, (x + width, y + row.out), (x + width, y + limb), (x, y + limb))
+        left = x + max(name_at, (width - name_width(scene, serves)) / 2)
+        name_on(canvas, scene, serves, left, y + limb)
+        for link, height in zip(rows, heights, strict=True):
+            link.draw(canvas, x, y + height, x + join)
+        if heights:
+            canvas.wire(serves, (x + join, y + limb), (x + join, y + heights[-1]))
+            for height in (limb, *heights[:-1]):
+                canvas.dot(serves, (x + join, y + height))
+
+    taps = [Tap(feed), Tap(serves, limb)]
+    taps += [Tap(LineId(link.from_line), height) for link, height in zip(links, heights, strict=True)]
+    return Block(
+        names=(item.tag, *(link.valve.tag for link in links)), width=width, up=row.up,
+        down=max(limb + _NAME_HALF, foot), left=tuple(taps), draw=draw,
+    )
 
 
 def bypass_block(scene: Scene, item: Bypass, limit_mm: float, silent: frozenset[LineId]) -> Block:
-    """One bypass valve between two lines."""
+    """One bypass valve between two lines of the corridor."""
     start, end = LineId(item.from_line), LineId(item.to_line)
     row = Row(scene, start, [through(scene, item.valve)], limit_mm=limit_mm, silent=silent)
-    return _back(scene, row, (item.valve.tag,), start, end, row.width + 1.0, told=False)
-
-
-def _back(  # noqa: PLR0913 - a row and the two lines it stands between
-    scene: Scene, row: Row, names: tuple[str, ...], start: LineId, end: LineId, width: float, *, told: bool
-) -> Block:
-    limb = row.down + (_LIMB if told else 1.0)
+    limb, width = row.down + 1.0, row.width + 1.0
 
     def draw(canvas: Canvas, x: float, y: float, _: float) -> None:
-        right = x + width
-        row.draw(canvas, x, y, right)
-        canvas.wire(end, (right, y + row.out), (right, y + limb), (x, y + limb))
-        if told:
-            name_on(canvas, scene, end, x + (width - name_width(scene, end)) / 2, y + limb)
+        row.draw(canvas, x, y, x + width)
+        canvas.wire(end, (x + width, y), (x + width, y + limb), (x, y + limb))
 
     return Block(
-        names=names, width=width, up=row.up, down=limb + (1.8 if told else 0.6), left=(Tap(start), Tap(end, limb)), draw=draw
+        names=(item.valve.tag,), width=width, up=row.up, down=limb + 0.6, left=(Tap(start), Tap(end, limb)), draw=draw
     )
 
 
@@ -57,10 +81,13 @@ def _regulator_cell(scene: Scene, item: Regulator) -> Cell:
     tank = scene.port(item.tag, "return")
     air = _air_plate(scene)
     inlet = scene.port(item.tag, "inlet") or LineId(item.fed_from)
-    words_left = 1.2 if item.relieving else 0.8 - words.width / 2
+    words_left = -0.4 if item.relieving else 0.8 - words.width / 2
     told = bool(tank is not None and scene.told(tank) and tank not in scene.letters)
     up = -body.top + (1.4 + air.body.bottom - air.body.top if by_air else 0.0)
-    down = body.bottom + (_RETURN_DOWN - 4.3 if item.relieving else words.reach) + (LABEL_HEIGHT + 0.5 if told else 0.0)
+    ringed = tank in scene.letters
+    drop = max(words.reach, 0.6 + (_RING / 2 if ringed else _TANK)) if item.relieving else words.reach
+    down = body.bottom + drop + (LABEL_HEIGHT + 0.5 if told else 0.0)
+    ring_x = body.left - _RING / 2 - 0.3
     corner = 0.0 if lock is None else CORNER + 2 * lock_half(lock)
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
@@ -73,22 +100,22 @@ def _regulator_cell(scene: Scene, item: Regulator) -> Cell:
             canvas.wire(AIR, (x, top), (x, placed.top - 1.4))
             canvas.symbol(air, (x - air.body.right / 2, placed.top - 1.4 - air.body.bottom))
         if item.relieving and tank is not None:
-            own = (f"{item.tag}-return",) if tank not in scene.letters else ()
-            canvas.wire(tank, (x - 1.4, y + 4.3), (x - 1.4, placed.bottom + 0.9))
-            outlet(canvas, scene, _returns_to(tank, own), (x - 1.4, placed.bottom + 0.9), *own)
+            low = placed.bottom + 0.6
+            if ringed:
+                canvas.wire(tank, (x - 1.4, y + 4.3), (x - 1.4, low), (x + ring_x + _RING / 2, low))
+                canvas.symbol(ring(scene.letters[tank]), (x + ring_x, low))
+            else:
+                canvas.wire(tank, (x - 1.4, y + 4.3), (x - 1.4, low))
+                outlet(canvas, scene, LineId(RESERVOIR), (x - 1.4, low), f"{item.tag}-return")
             if told:
                 label(canvas, scene, tank, (x + 1.0, placed.bottom + 4.4 + LABEL_HEIGHT / 2))
 
     return Cell(
-        left=max(4.6, words.width / 2, corner - body.left), right=max(6.2, words_left + words.width + ROOM, air.body.right / 2),
+        left=max(4.6, words.width / 2, corner - body.left, _RING / 2 - ring_x if ringed else 0.0), right=max(6.2, words_left + words.width + ROOM, air.body.right / 2),
         up=max(up, 0.0 if lock is None else LOCK_HALF - body.top), down=max(down, body.bottom + words.reach),
         line_in=inlet, line_out=LineId(item.serves), body=(symbol.body.left, symbol.body.right),
         clear=body.left - corner, paint=paint,
     )
-
-
-def _returns_to(tank: LineId, own: tuple[str, ...]) -> LineId:
-    return LineId("reservoir") if own else tank
 
 
 def _air_plate(scene: Scene) -> Symbol:

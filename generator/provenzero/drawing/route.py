@@ -9,8 +9,8 @@ from provenzero.drawing.scene import Scene
 from provenzero.drawing.symbols import ring
 from provenzero.network.model import LineId
 
-PITCH = 4.6
-EDGE = 2.6
+PITCH = 4.3
+EDGE = 2.4
 CLEAR = 1.6
 _STEP = 0.5
 _RING_AT = 2.2

@@ -9,7 +9,7 @@ from provenzero.drawing.scene import Scene
 from provenzero.drawing.tags import label, label_width
 from provenzero.network.model import LineId
 
-_TURN = 1.8
+_TURN = 3.2
 _APART = 0.8
 _OFF_DOT = 1.0
 

@@ -31,7 +31,7 @@ REGULATOR_HALF = 2.9
 TANK_TOP = 1.4
 BOTTLE_HALF = 2.25
 BOTTLE_HEIGHT = 9.0
-CYLINDER_LONG = 11.4
+CYLINDER_LONG = 10.4
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -267,11 +267,11 @@ def isolator(on: bool) -> Symbol:
 @cache
 def cylinder(piston: str) -> Symbol:
     """A double-acting cylinder from the corner of its closing end; ports on top; the rod comes out to close."""
-    at = {"open": 2.4, "close": 7.0}.get(piston, 4.7)
+    at = {"open": 2.2, "close": 6.2}.get(piston, 4.2)
     shapes = (
-        box(0, 0, CYLINDER_LONG, 5.6), box(at, 0, at + 1.4, 5.6, fill=Fill.TINT), box(at + 1.4, 2.3, at + 7.0, 3.3),
+        box(0, 0, CYLINDER_LONG, 5.6), box(at, 0, at + 1.4, 5.6, fill=Fill.TINT), box(at + 1.4, 2.3, at + 6.2, 3.3),
     )
-    return Symbol(shapes=shapes, body=Box(0, 0, CYLINDER_LONG + 4.0, 5.6))
+    return Symbol(shapes=shapes, body=Box(0, 0, CYLINDER_LONG + 2.6, 5.6))
 
 
 def arrow(start: Point, end: Point, head: float = 1.2) -> tuple[Shape, ...]:

@@ -98,10 +98,12 @@ def lozenge(canvas: Canvas, at: Point, number: int, *names: str) -> None:
     canvas.add(Kind.MARK, lozenge_shapes(at, str(number), lock_half(number)), *names, role=Role.ISOLATION)
 
 
-def lozenge_shapes(at: Point, words: str, half: float = LOCK_HALF) -> tuple[Shape, ...]:
+def lozenge_shapes(
+    at: Point, words: str, half: float = LOCK_HALF, tall: float = LOCK_HALF
+) -> tuple[Shape, ...]:
     """A filled lozenge with white letters."""
     x, y = at
-    points = ((x - half, y), (x, y - LOCK_HALF), (x + half, y), (x, y + LOCK_HALF))
+    points = ((x - half, y), (x, y - tall), (x + half, y), (x, y + tall))
     text = Text(at=(x, y + 0.95), words=words, size_mm=2.6, bold=True, ink=Fill.PAPER)
     return Polygon(points=points, pen=Pen.NONE, fill=Fill.INK), text
 

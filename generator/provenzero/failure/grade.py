@@ -7,8 +7,8 @@ from enum import StrEnum
 
 from provenzero.failure.single import bears
 from provenzero.network.model import DeviceKind, DeviceTag, LineId, Source, SourceKind
+from provenzero.state.held import held_open
 from provenzero.state.model import State, Wiring
-from provenzero.state.must import vented
 
 
 class IsolationGrade(StrEnum):
@@ -36,7 +36,7 @@ def grades(
     wiring: Wiring, start: State, state: State, zone: frozenset[LineId], locks: Mapping[DeviceTag, str]
 ) -> tuple[Grade, ...]:
     """The grade against each source that could have reached the zone before the locks, in the order of the network."""
-    case = _Case(wiring=wiring, state=state, zone=zone, locks=locks, held=vented(wiring, locks))
+    case = _Case(wiring=wiring, state=state, zone=zone, locks=locks, held=held_open(wiring, locks, state.pressures))
     found = []
     for source in wiring.network.sources:
         stored = source.kind is SourceKind.STORED

@@ -3,9 +3,9 @@
 from collections.abc import Iterable, Mapping
 
 from provenzero.network.model import DeviceKind, DeviceTag, LineId, SourceKind
+from provenzero.state.held import held_open
 from provenzero.state.may import reach
 from provenzero.state.model import State, Wiring
-from provenzero.state.must import vented
 
 
 def exposed(
@@ -19,7 +19,7 @@ def exposed(
 
     An electric isolator does not pass a little: it is left out.
     """
-    held = frozenset(vented(wiring, locks))
+    held = frozenset(held_open(wiring, locks, state.pressures))
     found = {}
     for tag in barriers:
         if wiring.device(tag).kind is not DeviceKind.ISOLATOR:
@@ -32,7 +32,7 @@ def bears(
     wiring: Wiring, state: State, zone: frozenset[LineId], locks: Mapping[DeviceTag, str], leaking: DeviceTag
 ) -> bool:
     """Whether the zone stays without pressure, and no stopped pump wakes, when one barrier passes."""
-    held = frozenset(vented(wiring, locks))
+    held = frozenset(held_open(wiring, locks, state.pressures))
     flood = reach(wiring, locks, state.pressures, leaking=frozenset({leaking}), walls=held)
     woken = any(
         s.kind is SourceKind.LIVE and s.drive is not None and s.drive in flood.lines and s.id not in state.running

@@ -11,6 +11,7 @@ from provenzero.plan.impairment import Loss, loss
 from provenzero.plan.model import Obstacle, Purpose
 from provenzero.plan.region import Region, enclose, unheld_movers
 from provenzero.plan.sequence import Made, Move, let_out_rest, perform, purpose_of
+from provenzero.state.held import held_open
 from provenzero.state.may import Reach, reach
 from provenzero.state.model import State, Wiring
 from provenzero.state.must import vented
@@ -162,7 +163,7 @@ def isolate(wiring: Wiring, state: State, zone: frozenset[LineId], region: Regio
     open_lines = tuple(line for line in targets if line in holding.held)
     if not obstacles:
         locks = needed(wiring, reached, zone, locks, open_lines)
-    now_held = vented(wiring, locks)
+    now_held = held_open(wiring, locks, reached.pressures)
     weak = _weak(wiring, reached, zone, region, locks)
     return Attempt(
         region=region,
@@ -280,5 +281,5 @@ def _lost_without(
     flood: Reach = reach(wiring, locks, state.pressures)
     if flood.lines & zone:
         return True
-    held = vented(wiring, locks)
+    held = vented(wiring, {k: v for k, v in locks.items() if k not in flood.freed})
     return any(line not in held for line in open_lines)

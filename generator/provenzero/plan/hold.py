@@ -6,6 +6,7 @@ from dataclasses import dataclass, field
 from itertools import product
 
 from provenzero.network.model import FULL_OPEN, Device, DeviceKind, DeviceTag, LineId, PassageKind
+from provenzero.plan.region import unheld_movers
 from provenzero.state.model import State, Wiring
 
 _MOVE = 0.01
@@ -56,7 +57,7 @@ def hold_open(
     best: tuple[tuple[float, ...], Holding] | None = None
     for positions in product(*(_current_first(wiring.device(t), state) for t in several)):
         assigned = dict(zip(several, positions, strict=True))
-        lockable = {t: p for t, p in assigned.items() if wiring.device(t).lockable}
+        lockable = {t: p for t, p in assigned.items() if _takes_lock(wiring.device(t), shut)}
         fixed = {t: p for t, p in assigned.items() if t not in lockable}
         holding = _choose(wiring, state, shut, {**barriers}, targets, tried=lockable, loose=fixed)
         moves = sum(state.positions[t] != p for t, p in {**holding.locked, **holding.loose}.items())
@@ -94,7 +95,7 @@ def _choose(  # noqa: PLR0913 - the choice and what it may not touch
             device = wiring.device(leg.device)
             if not device.movable or leg.device in holding.locked:
                 continue
-            if device.lockable:
+            if _takes_lock(device, shut):
                 holding.locked[leg.device] = leg.position
             else:
                 holding.loose[leg.device] = leg.position
@@ -136,7 +137,7 @@ def way_out(  # noqa: PLR0913 - a search, its start and what it may not touch
                     continue
                 if any(leg.device == tag and leg.position != position for leg in _legs(came, here)):
                     continue
-                total = cost + _price(device, position, state, fixed, to_hold=to_hold)
+                total = cost + _price(device, position, state, fixed, shut, to_hold=to_hold)
                 if there not in came or total < came[there][0]:
                     order += 1
                     came[there] = (total, here, Leg(tag, position, there))
@@ -160,7 +161,13 @@ def _exits(
 
 
 def _price(
-    device: Device, position: str, state: State, fixed: Mapping[DeviceTag, str], *, to_hold: bool
+    device: Device,
+    position: str,
+    state: State,
+    fixed: Mapping[DeviceTag, str],
+    shut: frozenset[LineId],
+    *,
+    to_hold: bool,
 ) -> float:
     """What using a device costs: a lock, a move, and much for throwing a handle to its other end."""
     if not device.movable or device.tag in fixed:
@@ -169,7 +176,12 @@ def _price(
     handle = _HANDLE if moves and device.kind is DeviceKind.FOUR_WAY_VALVE and position != "centre" else 0.0
     if not to_hold:
         return handle + (1.0 if moves else _MOVE)
-    return handle + (1.0 if device.lockable else _UNHELD) + (_MOVE if moves else 0.0)
+    return handle + (1.0 if _takes_lock(device, shut) else _UNHELD) + (_MOVE if moves else 0.0)
+
+
+def _takes_lock(device: Device, shut: frozenset[LineId]) -> bool:
+    """Whether a lock holds the device: it can be locked, and nothing that may be live can move it all the same."""
+    return device.lockable and not any(line in shut for line in unheld_movers(device))
 
 
 def _legs(came: Mapping[LineId, tuple[float, LineId | None, Leg | None]], end: LineId) -> list[Leg]:

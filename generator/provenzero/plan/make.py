@@ -15,9 +15,9 @@ from provenzero.plan.model import Lock, Obstacle, Plan, Purpose, Refusal, Sectio
 from provenzero.plan.reinstate import restore_all
 from provenzero.plan.steps import Script, reason_of
 from provenzero.state.action import initial
+from provenzero.state.held import held_open
 from provenzero.state.may import reach
 from provenzero.state.model import State, Wiring, wire
-from provenzero.state.must import vented
 from provenzero.unit.model import Unit
 
 _INDICATIONS = 2
@@ -261,7 +261,7 @@ def _locks(making: _Making, isolated: State, purposes: Mapping[DeviceTag, Purpos
     for tag, number in sorted(making.script.numbers.items(), key=lambda item: item[1]):
         fewer = {k: v for k, v in attempt.locks.items() if k != tag}
         flood = reach(wiring, fewer, isolated.pressures)
-        held = vented(wiring, fewer)
+        held = held_open(wiring, fewer, isolated.pressures)
         locks.append(
             Lock(
                 number=number,

@@ -13,7 +13,7 @@ DEAD: Interval = (0.0, 0.0)
 class State:
     """Positions, pressures [low, high] in Pa gauge, and at which end each piston stands (open, close, unknown).
 
-    `fed`: lines under compressed gas or a running source. `running`: live sources that are awake. `let_out`: live
+    `fed`: lines under compressed gas or a running source; `gassed`: those joined to compressed gas. `running`: live sources that are awake. `let_out`: live
     sources that a vent takes.
     """
 
@@ -21,6 +21,7 @@ class State:
     pressures: Mapping[LineId, Interval]
     pistons: Mapping[str, str]
     fed: frozenset[LineId]
+    gassed: frozenset[LineId]
     running: frozenset[str]
     let_out: frozenset[str]
 

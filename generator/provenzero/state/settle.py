@@ -18,10 +18,11 @@ _ATTEMPTS = 5
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Settled:
-    """The pressures after settling, who feeds whom, and which live sources reach a vent."""
+    """The pressures after settling, which lines are fed, which by gas joined to them, and what reaches a vent."""
 
     pressures: Mapping[LineId, Interval]
     fed: frozenset[LineId]
+    gassed: frozenset[LineId]
     live_vented: tuple[str, ...]
     live_drives: frozenset[str]
     positions: Mapping[DeviceTag, str]
@@ -33,6 +34,7 @@ class _Group:
     high: float
     vent: bool
     stiff: bool
+    gas: bool = False
     live: bool = False
     drained: bool = False
 
@@ -90,8 +92,16 @@ def _settle(wiring: Wiring, positions: Mapping[DeviceTag, str], before: Mapping[
             break
     pressures = {line: (groups[g].low, groups[g].high) for line, g in group_of.items()}
     fed = frozenset(line for line, g in group_of.items() if groups[g].stiff and not groups[g].vent)
+    gassed = frozenset(line for line, g in group_of.items() if groups[g].gas and groups[g].high > 0.0)
     vented = tuple(s.id for s in sources if s.id in live and _reaches_vent(groups, edges, group_of[s.line]))
-    return Settled(pressures=pressures, fed=fed, live_vented=vented, live_drives=frozenset(live), positions=positions)
+    return Settled(
+        pressures=pressures,
+        fed=fed,
+        gassed=gassed,
+        live_vented=vented,
+        live_drives=frozenset(live),
+        positions=positions,
+    )
 
 
 def _groups(wiring: Wiring, positions: Mapping[DeviceTag, str]) -> tuple[dict[LineId, int], list[_Edge]]:
@@ -145,11 +155,12 @@ def _begin(wiring: Wiring, group_of: Mapping[LineId, int], before: Mapping[LineI
             groups.append(_Group(*DEAD, vent=vent, stiff=False))
             continue
         stiff = [line for line in lines if line in charged]
-        low = min(before[line][0] for line in stiff or lines)
+        # Bottles share their pressure with emptied ones beside them, so those count for the low end too.
+        low = min(before[line][0] for line in ([k for k in lines if k in bottles] if stiff else lines))
         high = max(before[line][1] for line in lines)
         # An empty bottle that trapped liquid finds takes some in, and then pushes.
         gas = bool(stiff) or (high > 0.0 and any(line in bottles for line in lines))
-        groups.append(_Group(low, high, vent=False, stiff=gas))
+        groups.append(_Group(low, high, vent=False, stiff=gas, gas=gas))
     return groups
 
 

@@ -333,6 +333,7 @@ def start_state(network: Network) -> State:
         fed=frozenset({L("header")}),
         running=frozenset({"P-1"}),
         let_out=frozenset(),
+        gassed=frozenset(),
     )
 
 

@@ -42,8 +42,8 @@ def panel(signal: Signal) -> Notice:
     return Notice(signal=signal, word=signal.value.upper(), title=f"Title of {signal.value}", lines=("What it does.",))
 
 
-def reading(number: int) -> Reading:
-    return Reading(gauge=f"PG-{number}", place="unit panel", expected="0\u00a0psi", label="psi")
+def reading(step: int, number: int) -> Reading:
+    return Reading(gauge=f"PG-{number}", place=f"board{step}", expected="0\u00a0psi", label="psi")
 
 
 def card(number: int) -> StepCard:
@@ -55,13 +55,13 @@ def card(number: int) -> StepCard:
         speaks_of="For: header",
         unlock="LOCK 9 OFF" if number % 4 == 0 else "",
         lock=f"LOCK {number} ON",
-        readings=tuple(reading(n) for n in range(number % 5)),
+        readings=tuple(reading(number, n) for n in range(number % 5)),
         outcomes=("Nothing moves",),
         asks=("Start", "Due"),
         figures=("Comes out: 2 gal.",),
         why="keeps back the bank",
         otherwise=f"unlike{number}: STOP.",
-        hold="A second person checks." if number % 3 == 0 else "",
+        hold=f"second{number} checks." if number % 3 == 0 else "",
     )
 
 
