@@ -77,11 +77,11 @@ def make_plan(
     if stuck:
         obstacles = tuple(Obstacle(line=next(iter(wiring.anywhere[t])), words="no_way_back", path=(t,)) for t in stuck)
         return Refusal(unit=unit, job=job, on=on, zone=zone, obstacles=obstacles)
+    _tests(making, start)
     other = [k for k in start.fed if start.low(k) > 0.0 and script.state.pressures[k] != start.pressures[k]]
     if other:
         obstacles = tuple(Obstacle(line=k, words="not_restored") for k in other)
         return Refusal(unit=unit, job=job, on=on, zone=zone, obstacles=obstacles)
-    _tests(making, start)
     locks = _locks(making, isolated, purposes)
     return Plan(
         unit=unit,

@@ -3,7 +3,7 @@
 from collections.abc import Mapping
 from dataclasses import dataclass
 
-from provenzero.network.model import DeviceTag, LineId, Medium, Source, SourceKind
+from provenzero.network.model import DeviceTag, LineId, Source, SourceKind
 from provenzero.state.model import DEAD, Interval, State, Wiring
 from provenzero.state.must import vented
 from provenzero.state.settle import Settled, settle
@@ -92,27 +92,26 @@ def act(wiring: Wiring, state: State, device: DeviceTag, position: str) -> Effec
     return Effect(
         after=_state(settled, positions, pistons),
         moved=tuple(moved),
-        started=tuple(s.id for s in wiring.network.sources if _starts(wiring, s, settled, state)),
+        started=tuple(s.id for s in wiring.network.sources if _starts(s, settled, state)),
         live_vented=tuple(s for s in settled.live_vented if s not in state.let_out),
         risen=tuple(k for k, v in new.items() if v[1] > old[k][1] + _NOISE_PA),
         fallen=tuple(k for k, v in new.items() if v[1] < old[k][1] - _NOISE_PA),
     )
 
 
-def _starts(wiring: Wiring, source: Source, settled: Settled, before: State) -> bool:
+def _starts(source: Source, settled: Settled, before: State) -> bool:
     """An automatic pump that is awake now and finds, or found, less than its start pressure.
 
-    An air pump without a switch starts as soon as it has air. So does an automatic pump whose sensed line loses
+    A pump without a switch may start as soon as its drive is live. So does an automatic pump whose sensed line loses
     its last compressed gas: the least leak then starts it, again and again.
     """
     if source.kind is not SourceKind.LIVE or source.drive is None or source.id not in settled.live_drives:
         return False
     if source.senses is None:
-        blown = wiring.network.lines[source.drive].medium is Medium.AIR
-        return blown and source.id not in before.running
-    threshold = (source.starts_below_pag or 0.0) - _NOISE_PA
+        return source.id not in before.running
     if source.senses in before.gassed and source.senses not in settled.gassed:
         return True
+    threshold = (source.starts_below_pag or 0.0) - _NOISE_PA
     called_before = source.id in before.running and before.low(source.senses) < threshold
     return not called_before and min(before.low(source.senses), settled.pressures[source.senses][0]) < threshold
 
