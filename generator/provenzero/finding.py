@@ -47,9 +47,7 @@ class Finding:
 
 def in_order(findings: Iterable[Finding]) -> list[Finding]:
     """The findings in the order in which a person meets them: by file, line and column."""
-    return sorted(
-        findings, key=lambda f: (f.place.file, f.place.line or 0, f.place.column or 0, f.place.path)
-    )
+    return sorted(findings, key=lambda f: (f.place.file, f.place.line or 0, f.place.column or 0, f.place.path))
 
 
 def has_errors(findings: Iterable[Finding]) -> bool:

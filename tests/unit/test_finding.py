@@ -46,6 +46,12 @@ def test_findings_come_in_the_order_of_the_file() -> None:
     assert [f.place.line for f in in_order([finding(30), finding(None), finding(4)])] == [None, 4, 30]
 
 
+def test_findings_of_one_line_come_in_the_order_of_its_columns() -> None:
+    places = [Place(file="rig.yaml", line=1, column=column) for column in (9, 2)]
+    ordered = in_order(Finding(place=place, found="x", expected="y") for place in places)
+    assert [finding.place.column for finding in ordered] == [2, 9]
+
+
 def test_warnings_alone_are_no_errors() -> None:
     assert not has_errors([finding(severity=Severity.WARNING)])
     assert has_errors([finding(severity=Severity.WARNING), finding()])

@@ -12,7 +12,7 @@ from dataclasses import dataclass
 
 from provenzero.drawing.alternative import alternative, title
 from provenzero.drawing.banks import bank_block, header_block
-from provenzero.drawing.block import Block, in_nooks, shelves
+from provenzero.drawing.block import Block, in_nooks, in_pairs, shelves
 from provenzero.drawing.canvas import Canvas
 from provenzero.drawing.functions import function_block
 from provenzero.drawing.legend import legend_block
@@ -37,6 +37,8 @@ _GAP = 0.8
 _TOP = 1.0
 _LEAST_TAP = 5.0
 _SHELF_GAP = 5.0
+_PAIR_GAP = 2.0
+_BAND = 1.6
 _NARROW = 76.0
 
 
@@ -75,8 +77,9 @@ def _right(scene: Scene, limit: float, silent: frozenset[LineId]) -> list[Block]
         left = [link for link in left if link not in around]
         blocks.append(regulator_block(scene, item, around, limit, silent))
     blocks += [bypass_block(scene, link, limit, silent) for link in left]
-    blocks += [function_block(scene, item, limit, silent) for item in scene.unit.functions]
-    return blocks
+    functions = [function_block(scene, item, limit, 0.0, silent) for item in scene.unit.functions]
+    column = _column([*blocks, *functions])
+    return blocks + [function_block(scene, item, limit, column, silent) for item in scene.unit.functions]
 
 
 def _left(scene: Scene, limit: float, silent: frozenset[LineId]) -> list[Block]:
@@ -86,10 +89,11 @@ def _left(scene: Scene, limit: float, silent: frozenset[LineId]) -> list[Block]:
     banks = [bank_block(scene, item, limit, silent) for item in unit.banks if item.attached_to not in chambers]
     backups = [backup_block(scene, item, limit, silent) for item in unit.nitrogen_backups]
     air = [] if unit.air is None else [air_block(scene, unit.air, limit, silent)]
-    rows = [*pumps, header_block(scene, limit, silent), *banks, *backups]
-    wide = max(block.width for block in (*rows, *air))
+    stores = in_pairs([*banks, *backups], limit, _BAND, _PAIR_GAP)
+    rows = [*pumps, header_block(scene, limit, silent), *stores, *air]
+    wide = max(block.width for block in rows)
     rows, panels = in_nooks(rows, [panel_block(scene, item) for item in unit.panels], wide, _GAP)
-    return [reservoir_block(scene, unit.reservoir, wide, silent), *rows, *air, *shelves(panels, wide, _SHELF_GAP)]
+    return [reservoir_block(scene, unit.reservoir, wide, silent), *rows, *shelves(panels, wide, _SHELF_GAP)]
 
 
 def _divide(scene: Scene, left: Sequence[Block], right: Sequence[Block]) -> list[_Sheet]:

@@ -37,14 +37,46 @@ class Block:
         return self.up + self.down
 
 
+def in_pairs(blocks: list[Block], width: float, apart: float, gap: float) -> list[Block]:
+    """Put the second of two neighbours right of the first, a little higher, so that the line of the first runs under it."""
+    found: list[Block] = []
+    for block in blocks:
+        first = found[-1] if found else None
+        if first is not None and first.roomy and block.roomy and first.width + gap + block.width <= width:
+            found[-1] = _pair(first, block, apart, gap)
+        else:
+            found.append(block)
+    return found
+
+
+def _pair(first: Block, second: Block, apart: float, gap: float) -> Block:
+    rise = second.down + apart
+
+    def draw(canvas: Canvas, x: float, y: float, end: float) -> None:
+        first.draw(canvas, x, y, end)
+        second.draw(canvas, x + first.width + gap, y - rise, end)
+
+    return Block(
+        names=(*first.names, *second.names), width=first.width + gap + second.width, up=max(first.up, second.up + rise),
+        down=first.down, right=(*first.right, *(Tap(tap.line, tap.offset - rise) for tap in second.right)), draw=draw,
+    )
+
+
 def in_nooks(blocks: list[Block], small: list[Block], width: float, gap: float) -> tuple[list[Block], list[Block]]:
-    """Put blocks that tap nothing into the free corners over the lines that leave others; returns all, and what is left over."""
+    """Put blocks that tap nothing into the free corners over the lines that leave others; returns all, and what is left over.
+
+    Each goes where it adds least height, and stays over where it would add as much as a row of its own.
+    """
     found, left = list(blocks), []
     for item in small:
-        for place, block in enumerate(found):
-            if block.roomy and width - block.width >= item.width + gap and block.up >= item.height + gap:
-                found[place] = _beside(block, item, width, gap)
-                break
+        costs = [
+            (max(item.height + 2 * gap - block.up, 0.0), place)
+            for place, block in enumerate(found)
+            if block.roomy and width - block.width >= item.width + gap
+        ]
+        cost, place = min(costs, default=(item.height, 0))
+        if cost < item.height:
+            found[place] = _beside(found[place], item, width, gap)
         else:
             left.append(item)
     return found, left
@@ -53,11 +85,11 @@ def in_nooks(blocks: list[Block], small: list[Block], width: float, gap: float) 
 def _beside(block: Block, item: Block, width: float, gap: float) -> Block:
     def draw(canvas: Canvas, x: float, y: float, end: float) -> None:
         block.draw(canvas, x, y, end)
-        item.draw(canvas, x + width - item.width, y - gap - item.down, end)
+        item.draw(canvas, x + width - item.width, y - 2 * gap - item.down, end)
 
     return Block(
-        names=(*block.names, *item.names), width=width, up=block.up, down=block.down, left=block.left, right=block.right,
-        draw=draw,
+        names=(*block.names, *item.names), width=width, up=max(block.up, item.height + 2 * gap), down=block.down, left=block.left,
+        right=block.right, draw=draw,
     )
 
 

@@ -87,33 +87,40 @@ def symbol_of(scene: Scene, element: Inline) -> Symbol:
             return reducer()
 
 
-def through(scene: Scene, element: Inline) -> Cell:
+def through(scene: Scene, element: Inline, *, lock_below: bool = False) -> Cell:
     """A cell of what the fluid goes through."""
-    return device_cell(scene, element.tag, symbol_of(scene, element), *scene.ends(element.tag))
+    return device_cell(
+        scene, element.tag, symbol_of(scene, element), *scene.ends(element.tag), lock_below=lock_below
+    )
 
 
-def device_cell(scene: Scene, name: str, symbol: Symbol, line_in: LineId, line_out: LineId) -> Cell:
-    """A cell of any device that the line goes through: its tag over it, its lock at the corner below."""
-    words, lock, where = tag(name), scene.lock(name), scene.vent(name)
-    body = symbol.body.grown(BOX_MARGIN) if lock is not None else symbol.body
-    half = max(words.width / 2 + ROOM, symbol.body.right + LEAD)
-    if where is not None:
-        half = max(half, vent_width(scene, where) / 2 + ROOM)
-    up = words.reach + (0.0 if where is None else GAP + VENT_HEIGHT)
-    corner = 0.0 if lock is None else CORNER + lock_half(lock)
+def device_cell(  # noqa: PLR0913 - a device is its tag, its symbol and its two lines
+    scene: Scene, name: str, symbol: Symbol, line_in: LineId, line_out: LineId, *, lock_below: bool = False
+) -> Cell:
+    """A cell of any device that the line goes through, its tag over it, its lock beside the tag or at the corner below."""
+    lock, where = scene.lock(name), scene.vent(name)
+    low = None if not lock_below else lock
+    part = Part(name, symbol, tag(name) if lock_below else locked_tag(scene, name), boxed=lock is not None)
+    body = part.body
+    mark = 0.0 if where is None else vent_width(scene, where)
+    left = max(part.left + ROOM, LEAD - symbol.body.left, mark / 2)
+    right = max(part.right + ROOM, LEAD + symbol.body.right, mark / 2)
+    corner = 0.0
+    if lock is not None:
+        corner = CORNER + lock_half(lock)
+        left = max(left, corner - body.left)
+    up = part.words.reach + (0.0 if where is None else GAP + VENT_HEIGHT)
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
-        placed = canvas.symbol(symbol, (x, y), name, boxed=lock is not None)
-        words.above(canvas, x, placed, name)
-        if lock is not None:
-            lozenge(canvas, (placed.left - CORNER, placed.bottom + CORNER), lock, name)
+        placed = part.paint(canvas, (x, y), below=False)
+        if low is not None:
+            lozenge(canvas, (placed.left - CORNER, placed.bottom + CORNER), low, name)
         if where is not None:
-            vent_mark(canvas, scene, where, (x - vent_width(scene, where) / 2, placed.top - up), name)
+            vent_mark(canvas, scene, where, (x - mark / 2, placed.top - up), name)
 
     return Cell(
-        left=max(half, corner - body.left), right=half, up=up - body.top,
-        down=body.bottom + (0.0 if lock is None else CORNER + LOCK_HALF), line_in=line_in, line_out=line_out,
-        body=(symbol.body.left, symbol.body.right), clear=body.left - corner, paint=paint,
+        left=left, right=right, up=up - body.top, down=body.bottom + (0.0 if low is None else CORNER + LOCK_HALF),
+        line_in=line_in, line_out=line_out, body=(symbol.body.left, symbol.body.right), clear=body.left - corner, paint=paint,
     )
 
 
@@ -135,11 +142,12 @@ class Part:
     name: str
     symbol: Symbol
     words: Tag
+    boxed: bool = False
 
     @property
     def body(self) -> Box:
         """The body, with the box of an isolation point."""
-        return self.symbol.body if self.words.lock is None else self.symbol.body.grown(BOX_MARGIN)
+        return self.symbol.body.grown(BOX_MARGIN) if self.boxed else self.symbol.body
 
     @property
     def left(self) -> float:
@@ -153,9 +161,14 @@ class Part:
 
     def paint(self, canvas: Canvas, at: tuple[float, float], *, below: bool) -> Box:
         """Put the device; returns its body."""
-        placed = canvas.symbol(self.symbol, at, self.name, boxed=self.words.lock is not None)
+        placed = canvas.symbol(self.symbol, at, self.name, boxed=self.boxed)
         (self.words.below if below else self.words.above)(canvas, at[0], placed, self.name)
         return placed
+
+
+def part_of(scene: Scene, name: str, symbol: Symbol) -> Part:
+    """A device with its tag, boxed and numbered if it is locked."""
+    return Part(name, symbol, locked_tag(scene, name), boxed=scene.lock(name) is not None)
 
 
 def _instrument(scene: Scene, item: Instrument, line: LineId, *, below: bool) -> Cell:
@@ -175,7 +188,7 @@ def _instrument(scene: Scene, item: Instrument, line: LineId, *, below: bool) ->
 
 def _shut(scene: Scene, valve: Valve) -> Part:
     symbol = shut_off(scene.position(valve.tag) == "open", valve.exhausts)
-    return Part(valve.tag, symbol, locked_tag(scene, valve.tag))
+    return part_of(scene, valve.tag, symbol)
 
 
 def _on_line(  # noqa: PLR0913 - a cell is its extents and its paint

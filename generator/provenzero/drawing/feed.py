@@ -4,11 +4,11 @@ from collections.abc import Callable
 from dataclasses import dataclass
 
 from provenzero.drawing.canvas import Canvas
-from provenzero.drawing.cells import LEAD, ROOM, Part
+from provenzero.drawing.cells import LEAD, ROOM, part_of
 from provenzero.drawing.plates import from_flag
 from provenzero.drawing.scene import Scene
 from provenzero.drawing.symbols import isolator, shut_off
-from provenzero.drawing.tags import GAP, LABEL_HEIGHT, VENT_HEIGHT, label, label_width, locked_tag, vent_mark, vent_width
+from provenzero.drawing.tags import GAP, LABEL_HEIGHT, VENT_HEIGHT, label, label_width, vent_mark, vent_width
 from provenzero.network.model import LineId
 from provenzero.unit.model import Isolator, Valve
 
@@ -37,13 +37,13 @@ def feed(scene: Scene, words: str, supply: LineId, load: LineId, device: Valve |
         symbol = shut_off(scene.position(device.tag) == "open", device.exhausts)
     else:
         symbol = isolator(scene.position(device.tag) == "on")
-    part = Part(device.tag, symbol, locked_tag(scene, device.tag))
+    part = part_of(scene, device.tag, symbol)
     where = scene.vent(device.tag)
     told = scene.told(load)
     after = LEAD + (label_width(told) + 1.0 if told else 0.0)
     right = max(part.body.right + after, part.right + ROOM)
     left = max(LEAD - part.body.left, part.left - wide + ROOM)
-    extra = 0.0 if where is None else VENT_HEIGHT + GAP
+    mark = 0.0 if where is None else vent_width(scene, where) + GAP
 
     def draw(canvas: Canvas, end: float, y: float) -> None:
         x = end - right
@@ -53,10 +53,10 @@ def feed(scene: Scene, words: str, supply: LineId, load: LineId, device: Valve |
         canvas.wire(load, (x + symbol.body.right, y), (end, y))
         label(canvas, scene, load, (end - (after - 1.0) / 2 - 0.5, y))
         if where is not None:
-            corner = (x - vent_width(scene, where) / 2, y + part.body.top - part.words.reach - extra)
-            vent_mark(canvas, scene, where, corner, device.tag)
+            vent_mark(canvas, scene, where, (x - part.left - mark, y - tall - VENT_HEIGHT - GAP), device.tag)
 
     return Feed(
-        width=wide + left + right, up=max(part.words.reach - part.body.top + extra, tall),
+        width=max(wide + left, part.left + mark) + right,
+        up=max(part.words.reach - part.body.top, tall + (VENT_HEIGHT + GAP if mark else 0.0)),
         down=max(part.body.bottom, LABEL_HEIGHT / 2, tall), draw=draw,
     )

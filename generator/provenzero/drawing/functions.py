@@ -38,6 +38,7 @@ _CYLINDER = CYLINDER_LONG + 2.6
 _CYLINDER_PORTS = (1.2, 9.0)
 _LABEL_ROOM = 3.4
 _LABEL_MM = 36.0
+_NAME_ROOM = 6.0
 _TITLE_BOTTOM = 5.9
 _NAME_PITCH = 2.7
 
@@ -68,11 +69,16 @@ class _Plan:
     down: float
 
 
-def function_block(scene: Scene, item: Function, limit_mm: float, silent: frozenset[LineId]) -> Block:
-    """One function from its supply to its cylinder; what stands in the supply goes under the valve if the width asks for it."""
-    plan = _measure(scene, item, limit_mm, silent, under=False)
+def function_block(
+    scene: Scene, item: Function, limit_mm: float, column_mm: float, silent: frozenset[LineId]
+) -> Block:
+    """One function from its supply to its cylinder.
+
+    What stands in the supply goes under the valve where the limit asks for it. The name may use the width of the column.
+    """
+    plan = _measure(scene, item, limit_mm, column_mm, silent, under=False)
     if plan.width > limit_mm and item.valve.supply:
-        plan = _measure(scene, item, limit_mm, silent, under=True)
+        plan = _measure(scene, item, limit_mm, column_mm, silent, under=True)
     taps = [Tap(LineId(item.fed_from), plan.row_at)]
     if scene.unit.common_returns:
         taps.append(Tap(LineId(RETURNS), plan.returns))
@@ -85,8 +91,8 @@ def function_block(scene: Scene, item: Function, limit_mm: float, silent: frozen
     )
 
 
-def _measure(
-    scene: Scene, item: Function, limit_mm: float, silent: frozenset[LineId], *, under: bool
+def _measure(  # noqa: PLR0913 - a function, the room there is, and where its supply goes
+    scene: Scene, item: Function, limit_mm: float, column_mm: float, silent: frozenset[LineId], *, under: bool
 ) -> _Plan:
     feed = LineId(item.fed_from)
     title = _title(scene, item)
@@ -110,7 +116,7 @@ def _measure(
         turn = max(row.width + 1.0, valve + SIDE + PORT_RIGHT + _APART)
         supply = _VALVE_TOP + max(SIDE, end.down if turn > mover - 1.0 else 0.0) + _APART
         returns = supply + _APART
-        row_at = returns + row.up + 1.2
+        row_at = returns + row.up + 0.8
     beside = turn if turn is not None else valve + SIDE + PORT_RIGHT
     floor = max(
         returns + 0.8 if scene.unit.common_returns else _VALVE_BOTTOM + 9.0, _VALVE_TOP + end.down, row_at + row.down,
@@ -120,12 +126,13 @@ def _measure(
     surge, at, bottom = _surge(scene, item, silent, max(at, beside), floor)
     reach = max(at + _LABEL_ROOM, max((x + c.right for c, x in above), default=0.0) - _CYLINDER_PORTS[1] + 1.0)
     right = reach + _CYLINDER + _LABEL_ROOM
+    name_end = max(right, min(column_mm, right + _NAME_ROOM))
     beyond = max(at, beside + 1.0) if surge or below else beside + 1.0
-    label_at, lines = _label(item.label, end, mover, right, beyond)
+    label_at, lines = _label(item.label, end, mover, name_end, beyond)
     return _Plan(
         row=row, row_at=row_at, turn=turn, supply=supply, valve=valve, movers=end, mover=mover, above=above, below=below,
-        surge=surge, cylinder=reach, returns=returns, label_at=label_at, label=lines, width=right,
-        up=max([0.8, *(cell.up for cell, _ in above)]), down=max(bottom, label_at + len(lines) * _NAME_PITCH),
+        surge=surge, cylinder=reach, returns=returns, label_at=label_at, label=lines, width=name_end,
+        up=max([0.8, *(cell.up for cell, _ in above)]), down=max(bottom, label_at + (len(lines) - 1) * _NAME_PITCH + 2.5),
     )
 
 
@@ -248,11 +255,11 @@ def _draw_cylinder(canvas: Canvas, scene: Scene, item: Function, plan: _Plan, at
     left, top = x + plan.cylinder, y + _VALVE_TOP
     canvas.symbol(cylinder(scene.marks.pistons.get(item.name, "")), (left, top), item.name)
     letters = (
-        (scene.wording.closing, left + _CYLINDER_PORTS[0] - 1.5, Anchor.END),
-        (scene.wording.opening, left + _CYLINDER_PORTS[1] + 1.5, Anchor.START),
+        (scene.wording.closing, (left - 0.6, top + SIDE / 2 + 0.9), Anchor.END),
+        (scene.wording.opening, (left + _CYLINDER_PORTS[1] + 1.5, top - 2.0), Anchor.START),
     )
     for words, place, anchor in letters:
-        canvas.add(Kind.TAG, (Text(at=(place, top - 0.7), words=words, size_mm=2.4, anchor=anchor),), item.name)
+        canvas.add(Kind.TAG, (Text(at=place, words=words, size_mm=2.4, anchor=anchor),), item.name)
     half = max(width_mm(words, TAG_MM, bold=True) for words in plan.label) / 2
     middle = min(left + CYLINDER_LONG / 2, x + plan.width - half)
     for number, words in enumerate(plan.label):

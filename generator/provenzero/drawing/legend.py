@@ -10,7 +10,7 @@ from provenzero.drawing.tags import down_arrow, lozenge_shapes, word_shapes
 
 _SIZE = 2.4
 _SAMPLE = 17.0
-_ROW = 4.3
+_ROW = 4.1
 _PAD = 0.8
 
 

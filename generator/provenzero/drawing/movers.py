@@ -4,13 +4,13 @@ from collections.abc import Callable
 from dataclasses import dataclass
 
 from provenzero.drawing.canvas import Canvas
-from provenzero.drawing.cells import LEAD, ROOM, Part
+from provenzero.drawing.cells import LEAD, ROOM, part_of
 from provenzero.drawing.fourway import SIDE, pilot_cell, solenoid_cell
 from provenzero.drawing.metric import width_mm
 from provenzero.drawing.model import Box, Fill, Pen, Rect, Text
 from provenzero.drawing.scene import Scene
 from provenzero.drawing.symbols import Symbol, shut_off, stroke
-from provenzero.drawing.tags import TAG_MM, label, label_width, locked_tag
+from provenzero.drawing.tags import TAG_MM, label, label_width
 from provenzero.network.model import DeviceTag, LineId
 from provenzero.unit.model import Function, Panel, PanelKind
 
@@ -108,7 +108,7 @@ def _isolated(scene: Scene, item: Function, panels: list[Panel]) -> Movers:
         raise ValueError(f"{item.valve.tag} has no pilot shut-off")
     own = LineId(f"{item.name}.pilot")
     half = max(len(panels) * PITCH / 2, 2.0)
-    part = Part(valve.tag, _gathered(scene, valve.tag, half, exhausts=valve.exhausts), locked_tag(scene, valve.tag))
+    part = part_of(scene, valve.tag, _gathered(scene, valve.tag, half, exhausts=valve.exhausts))
     told = scene.told(own)
     middle = max(SIDE / 2, half)
     reach = _CELL + max(LEAD + (label_width(told) if told else 0.0) - part.body.left, part.left + ROOM - _CELL)

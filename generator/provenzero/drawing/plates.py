@@ -56,13 +56,10 @@ def plate(words: str, limit_mm: float, *, bold: bool = False, half_mm: float = 0
 
 def named(scene: Scene, line: LineId) -> Cell:
     """A cell that names a shared line over it and carries the word that must stand on it."""
-    words = scene.name(line)
-    told = scene.told(line)
-    wide = max(width_mm(words, TAG_MM, bold=True), label_width(told) if told else 0.0) + 2 * ROOM
+    wide = name_width(scene, line)
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
-        name_text(canvas, words, line, x + wide / 2, y - (2.3 if told else 1.2))
-        label(canvas, scene, line, (x + wide / 2, y))
+        name_over(canvas, scene, line, x + wide / 2, y)
 
     return Cell(
         left=0.0, right=wide, up=4.6, down=1.8, line_in=line, line_out=line, body=None, clear=0.0, paint=paint
@@ -70,23 +67,14 @@ def named(scene: Scene, line: LineId) -> Cell:
 
 
 def name_width(scene: Scene, line: LineId) -> float:
-    """Width of the name of a shared line and of the word on it [mm]."""
+    """Width of the name of a shared line over it, or of the word on it [mm]."""
     told = scene.told(line)
-    return width_mm(scene.name(line), TAG_MM, bold=True) + 1.0 + (label_width(told) + 1.0 if told else 0.0)
+    return max(width_mm(scene.name(line), TAG_MM, bold=True), label_width(told) if told else 0.0) + 2 * ROOM
 
 
-def name_on(canvas: Canvas, scene: Scene, line: LineId, left: float, y: float) -> None:
-    """Put the name of a shared line on the line itself, and after it the word that must stand there."""
-    words = scene.name(line)
-    width = width_mm(words, TAG_MM, bold=True) + 1.0
-    frame = Rect(at=(left, y - 1.7), width=width, height=3.4, pen=Pen.NONE, fill=Fill.PAPER)
-    text = Text(at=(left + width / 2, y + 0.95), words=words, size_mm=TAG_MM, bold=True)
-    canvas.add(Kind.LABEL, (frame, text), line, role=scene.marks.role(line))
-    told = scene.told(line)
-    if told:
-        label(canvas, scene, line, (left + width + 1.0 + label_width(told) / 2, y))
-
-
-def name_text(canvas: Canvas, words: str, line: LineId, x: float, base: float) -> None:
-    """Put the name of a shared line over it."""
-    canvas.add(Kind.TAG, (Text(at=(x, base), words=words, size_mm=TAG_MM, bold=True),), line)
+def name_over(canvas: Canvas, scene: Scene, line: LineId, x: float, y: float) -> None:
+    """Put the name of a shared line over it, and on it the word that must stand there."""
+    base = y - (2.3 if scene.told(line) else 1.2)
+    text = Text(at=(x, base), words=scene.name(line), size_mm=TAG_MM, bold=True)
+    canvas.add(Kind.TAG, (text,), line)
+    label(canvas, scene, line, (x, y))

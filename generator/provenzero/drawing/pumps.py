@@ -17,7 +17,7 @@ _SHAFT = 1.5
 
 def pump_block(scene: Scene, item: Pump, limit_mm: float, silent: frozenset[LineId]) -> Block:
     """One pump with everything between its suction and its delivery."""
-    cells = elements(scene, item.suction, LIQUID)
+    cells = elements(scene, item.suction, LIQUID, lock_below=True)
     suction = scene.port(item.tag, "suction") or LIQUID
     discharge = scene.port(item.tag, "discharge") or LineId(item.delivers_to)
     cells.append(_pump_cell(scene, item, suction, discharge, cells))
@@ -25,7 +25,7 @@ def pump_block(scene: Scene, item: Pump, limit_mm: float, silent: frozenset[Line
     if rest and isinstance(rest[0], CheckValve):
         cells.append(device_cell(scene, rest[0].tag, check_valve(), discharge, discharge))
         rest = rest[1:]
-    cells += elements(scene, rest, discharge)
+    cells += elements(scene, rest, discharge, lock_below=True)
     row = Row(scene, LIQUID, cells, limit_mm=limit_mm, silent=silent)
     return Block(
         names=(item.tag,), width=row.width, up=row.up, down=row.down, left=(Tap(LIQUID),),
@@ -33,13 +33,15 @@ def pump_block(scene: Scene, item: Pump, limit_mm: float, silent: frozenset[Line
     )
 
 
-def elements(scene: Scene, run: tuple[Element, ...], start: LineId) -> list[Cell]:
+def elements(
+    scene: Scene, run: tuple[Element, ...], start: LineId, *, lock_below: bool = False
+) -> list[Cell]:
     """The cells of a run: what the fluid goes through, and what stands on the line where it has come to."""
     cells: list[Cell] = []
     here = start
     for element in run:
         if isinstance(element, Inline):
-            cells.append(through(scene, element))
+            cells.append(through(scene, element, lock_below=lock_below))
             here = cells[-1].line_out
         else:
             cells.append(standing(scene, element, here))

@@ -5,7 +5,7 @@ from collections.abc import Sequence
 from provenzero.drawing.block import Block, Tap
 from provenzero.drawing.canvas import BOX_MARGIN, Canvas
 from provenzero.drawing.cells import ROOM, Cell, outlet, through
-from provenzero.drawing.plates import name_on, name_width, plate
+from provenzero.drawing.plates import name_over, name_width, plate
 from provenzero.drawing.pumps import elements, fittings
 from provenzero.drawing.row import Row
 from provenzero.drawing.scene import AIR, Scene
@@ -14,7 +14,7 @@ from provenzero.drawing.tags import CORNER, LABEL_HEIGHT, LOCK_HALF, label, lock
 from provenzero.network.model import LineId
 from provenzero.unit.model import RESERVOIR, Bypass, Regulator, RegulatorControl
 
-_LIMB = 1.9
+_LIMB = 1.2
 _NAME_HALF = 1.8
 _RING = 3.8
 _TANK = 2.6
@@ -29,9 +29,11 @@ def regulator_block(
     row = Row(scene, feed, cells, limit_mm=limit_mm, silent=silent)
     rows = [Row(scene, LineId(n.from_line), [through(scene, n.valve)], limit_mm=limit_mm, silent=silent) for n in links]
     join = max((link.width for link in rows), default=0.0) + 1.0
-    name_at = join + 1.0 if rows else 1.0
+    regulator_end = sum(cell.left + cell.right for cell in cells[: len(item.upstream) + 1])
+    name_at = max(regulator_end, join) + 1.0 if row.out == 0.0 else join + 1.0
+    told = scene.told(serves)
     width = max(row.width + 1.0, name_at + name_width(scene, serves) + 1.6)
-    limb = row.down + _LIMB
+    limb = row.down + (_LIMB if row.out == 0.0 else _LIMB + 3.0)
     heights: list[float] = []
     foot = limb + 0.6
     for link in rows:
@@ -41,8 +43,7 @@ def regulator_block(
     def draw(canvas: Canvas, x: float, y: float, _: float) -> None:
         row.draw(canvas, x, y, x + width)
         canvas.wire(serves, (x + width, y + row.out), (x + width, y + limb), (x, y + limb))
-        left = x + max(name_at, (width - name_width(scene, serves)) / 2)
-        name_on(canvas, scene, serves, left, y + limb)
+        name_over(canvas, scene, serves, x + name_at + name_width(scene, serves) / 2, y + limb)
         for link, height in zip(rows, heights, strict=True):
             link.draw(canvas, x, y + height, x + join)
         if heights:
@@ -54,7 +55,7 @@ def regulator_block(
     taps += [Tap(LineId(link.from_line), height) for link, height in zip(links, heights, strict=True)]
     return Block(
         names=(item.tag, *(link.valve.tag for link in links)), width=width, up=row.up,
-        down=max(limb + _NAME_HALF, foot), left=tuple(taps), draw=draw,
+        down=max(limb + (_NAME_HALF if told else 1.1), foot), left=tuple(taps), draw=draw,
     )
 
 

@@ -41,7 +41,9 @@ def air_block(scene: Scene, item: AirSupply, limit_mm: float, silent: frozenset[
         canvas.symbol(goes, (end, y + row.out))
 
     width = lead + LEAD + row.width + after + goes.body.right
-    return Block(names=("air",), width=width, up=max(row.up, 2.0), down=max(row.down, row.out + 2.0), draw=draw)
+    return Block(
+        names=("air",), width=width, up=max(row.up, 2.0), down=max(row.down, row.out + 2.0), roomy=row.out == 0.0, draw=draw
+    )
 
 
 def panel_block(scene: Scene, item: Panel) -> Block:
@@ -83,7 +85,8 @@ def backup_block(scene: Scene, item: NitrogenBackup, limit_mm: float, silent: fr
         cells.append(_joint(piping, gas, target))
     row = Row(scene, gas, cells, limit_mm=limit_mm, silent=silent, from_first=True)
     return Block(
-        names=(item.tag,), width=row.width, up=row.up, down=row.down, right=(Tap(target, row.out),), draw=row.draw
+        names=(item.tag,), width=row.width, up=row.up, down=row.down, right=(Tap(target, row.out),),
+        roomy=row.out == 0.0, draw=row.draw,
     )
 
 

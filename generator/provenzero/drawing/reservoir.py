@@ -4,7 +4,7 @@ from provenzero.drawing.block import Block, Tap
 from provenzero.drawing.canvas import Canvas
 from provenzero.drawing.cells import LEAD, device_cell, outlet, symbol_of
 from provenzero.drawing.model import Box, Fill, Pen, Shape, Text
-from provenzero.drawing.plates import name_on, name_width
+from provenzero.drawing.plates import name_over, name_width
 from provenzero.drawing.row import Row
 from provenzero.drawing.scene import Scene
 from provenzero.drawing.symbols import Symbol, breather, box, entry, stroke
@@ -14,8 +14,8 @@ from provenzero.network.model import LineId
 from provenzero.unit.model import ATMOSPHERE, RESERVOIR, RETURNS, Reservoir
 
 _LEFT = 6.0
-_DEEP = 9.0
-_OUTLET = 6.6
+_DEEP = 7.6
+_OUTLET = 5.3
 _LIMB = -3.6
 _BREATHER = 4.0
 
@@ -23,7 +23,7 @@ _BREATHER = 4.0
 def reservoir_block(scene: Scene, item: Reservoir, width: float, silent: frozenset[LineId]) -> Block:
     """The reservoir at the foot of the sheet; its height is that of its open top."""
     returns = LineId(RETURNS)
-    limb = name_width(scene, returns) + 6.0 if scene.unit.common_returns else 0.0
+    limb = name_width(scene, returns) + 4.0 if scene.unit.common_returns else 0.0
     drain = _drain(scene, item, silent)
     beside = max(limb, drain.width + LEAD + 4.6 if drain is not None else 0.0)
     right = max(width - beside, _LEFT + 24.0)
@@ -40,7 +40,7 @@ def reservoir_block(scene: Scene, item: Reservoir, width: float, silent: frozens
             canvas.wire(LineId(RESERVOIR), (inlet, y), (inlet, y - 1.0))
             canvas.symbol(entry(), (inlet, y - 1.4), f"{item.tag}-returns")
             canvas.wire(returns, (inlet, y - 1.8), (inlet, y + _LIMB), (end, y + _LIMB))
-            name_on(canvas, scene, returns, inlet + 3.0, y + _LIMB)
+            name_over(canvas, scene, returns, inlet + 1.5 + name_width(scene, returns) / 2, y + _LIMB)
         if drain is not None:
             finish = x + right + drain.width + LEAD
             drain.draw(canvas, x + right, y + _OUTLET, finish)
@@ -50,7 +50,7 @@ def reservoir_block(scene: Scene, item: Reservoir, width: float, silent: frozens
     down = max(_DEEP, 0.0 if drain is None else _OUTLET + drain.down, 0.0 if drain is None else _OUTLET + 3.8)
     taps = (Tap(returns, _LIMB),) if scene.unit.common_returns else ()
     return Block(
-        names=(item.tag,), width=right + beside, up=5.4, down=down + 0.4, left=(Tap(LIQUID, _OUTLET),), right=taps, draw=draw
+        names=(item.tag,), width=right + beside, up=6.4 + (1.2 if scene.told(returns) else 0.0), down=down + 0.4, left=(Tap(LIQUID, _OUTLET),), right=taps, draw=draw
     )
 
 
@@ -65,8 +65,8 @@ def _tank(scene: Scene, item: Reservoir, width: float) -> Symbol:
     """The tank with its tag, and inside it the words on its gas space and on its fluid."""
     shapes: list[Shape] = [
         box(0, 0, width, _DEEP, pen=Pen.NONE), stroke((0, 0), (0, _DEEP), (width, _DEEP), (width, 0), pen=Pen.HEAVY),
-        box(0.4, 3.0, width - 0.4, _DEEP - 0.4, fill=Fill.TINT, pen=Pen.NONE), stroke((0.3, 3.0), (width - 0.3, 3.0), pen=Pen.FINE),
-        Text(at=(width / 2, 6.9), words=item.tag, size_mm=TAG_MM, bold=True),
+        box(0.4, 2.6, width - 0.4, _DEEP - 0.4, fill=Fill.TINT, pen=Pen.NONE), stroke((0.3, 2.6), (width - 0.3, 2.6), pen=Pen.FINE),
+        Text(at=(width / 2, 6.0), words=item.tag, size_mm=TAG_MM, bold=True),
     ]
     space, fluid = LineId(RESERVOIR), LIQUID
     shapes += label_shapes(scene, space, (2.0 + label_width(scene.told(space)) / 2, 1.3))

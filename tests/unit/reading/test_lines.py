@@ -212,6 +212,16 @@ def test_broken_text_is_told_by_its_line_with_the_cure(text: str, line: int, fou
     assert expected in finding.expected
 
 
+def test_broken_text_is_told_by_its_column_too() -> None:
+    place = only("a: 1\nbc: d: e").place
+    assert (place.line, place.column) == (2, 6)
+
+
+def test_a_tab_behind_the_indentation_is_not_blamed_for_another_fault() -> None:
+    assert only("a:\t1\n  b: 2").found == "a colon where no value may begin"
+    assert only("a: b:\tc").found == "a colon where no value may begin"
+
+
 @pytest.mark.parametrize("opening", ["[", "{a: ", "- "])
 @pytest.mark.parametrize("depth", [DEEPEST + 1, 100_000])
 def test_nesting_without_end_is_refused(opening: str, depth: int) -> None:

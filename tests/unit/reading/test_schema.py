@@ -53,6 +53,9 @@ UNIT: dict[str, Any] = {
         "bottles": {"type": "integer", "minimum": 1, "maximum": 99},
         "code": {"type": "string", "pattern": "^[A-Z]+$"},
         "format": {"const": 1},
+        "returned": {"const": "none"},
+        "clock": {"enum": list(range(24))},
+        "month": {"enum": list(range(1, 16))},
         "place": {"type": "string", "examples": ["left end of the skid"]},
         "site": {
             "type": "object",
@@ -160,6 +163,15 @@ head: {tag: A, by: B, on: C}
             "1:1: site: found no 'lines'; expected the key lines (a value such as {kind: hose, taps: [1, true]})",
         ),
         ("bleed: maybe", "1:8: bleed: found 'maybe'; expected 'none', or a mapping of keys"),
+        ("returned: non", "1:11: returned: found 'non'; expected 'none'"),
+        (f"centre: {'v' * 41}", f"1:9: centre: found '{'v' * 40}…'; expected one of vents, blocks, unknown"),
+        (f"centre: {'v' * 40}", f"1:9: centre: found '{'v' * 40}'; expected one of vents, blocks, unknown"),
+        (
+            "clock: 24",
+            "1:8: clock: found the number 24; expected one of "
+            "0, 1, 2, 3, 4, 5, 6, 7, 8, 9, 10, 11, 12, 13, 14 and 9 more",
+        ),
+        ("month: 0", "1:8: month: found the number 0; expected one of " + ", ".join(str(n) for n in range(1, 16))),
         ("bleed: {}", "1:1: bleed: found no 'tag'; expected the key tag"),
         ("lock: {foot: x}", "1:1: lock: found no 'hand'; expected the key hand, or the key pilot"),
     ],
