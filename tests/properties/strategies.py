@@ -183,7 +183,14 @@ class Maker:
             run.append({"kind": "bleed", **self.bleed("NX-1")})
         if self.chance(80):
             run.append({"kind": "check", "tag": "NC-1", "location": "rack"})
-        return {"tag": "NB-1", "location": "rack", "bottles": 2, "bottle_volume": "50 L", "pressure": "2800 psi", "run": run}
+        return {
+            "tag": "NB-1",
+            "location": "rack",
+            "bottles": 2,
+            "bottle_volume": "50 L",
+            "pressure": "2800 psi",
+            "run": run,
+        }
 
 
 @st.composite
@@ -211,7 +218,13 @@ def unit_data(draw: Draw, most_functions: int = 8, most_banks: int = 4, most_pum
     supply = [{"kind": "valve", **make.air_valve("AV-1")}] if make.chance(80) else []
     return {
         "format": 1,
-        "unit": {"tag": "HCU-0", "name": "generated", "site": "nowhere", "jurisdiction": "other", "rated_pressure": "3000 psi"},
+        "unit": {
+            "tag": "HCU-0",
+            "name": "generated",
+            "site": "nowhere",
+            "jurisdiction": "other",
+            "rated_pressure": "3000 psi",
+        },
         "description": {"revision": "1", "date": "2026-01-01", "written_by": "generator", "verified": "no"},
         "fluid": {"kind": make.one_of("mineral_oil", "water_glycol", "water_based", "unknown")},
         "reservoir": {
@@ -228,9 +241,7 @@ def unit_data(draw: Draw, most_functions: int = 8, most_banks: int = 4, most_pum
         "pumps": [make.pump(i, air=air) for i in range(draw(st.integers(1, most_pumps)))],
         "regulators": regulators,
         "bypasses": bypasses,
-        "functions": [
-            make.function(i, lines, tags, centre) for i in range(draw(st.integers(1, most_functions)))
-        ],
+        "functions": [make.function(i, lines, tags, centre) for i in range(draw(st.integers(1, most_functions)))],
         "air": {"pressure": "125 psi", "run": supply} if air else "none",
         "panels": panels,
         "nitrogen_backup": [make.backup()] if make.chance(30) else [],

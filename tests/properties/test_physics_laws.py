@@ -107,15 +107,11 @@ def test_energy_that_leaves_a_fast_expansion_is_the_work_of_its_pressure(
 
 @law
 @given(st.floats(1 * MPA, 60 * MPA), st.floats(193.15, 393.15))
-def test_heat_at_fixed_volume_raises_entropy_by_heat_over_temperature(
-    pressure: float, temperature: float
-) -> None:
+def test_heat_at_fixed_volume_raises_entropy_by_heat_over_temperature(pressure: float, temperature: float) -> None:
     # Second law: T ds = du at constant volume; energy by the difference of the states.
     density = gas_density_kg_m3(pressure, temperature)
     step = 1e-3 * temperature
-    entropy = gas_entropy_j_kg_k(density, temperature + step) - gas_entropy_j_kg_k(
-        density, temperature - step
-    )
+    entropy = gas_entropy_j_kg_k(density, temperature + step) - gas_entropy_j_kg_k(density, temperature - step)
     hot = gas_state(gas_pressure_pa(density, temperature + step), temperature + step)
     cold = gas_state(gas_pressure_pa(density, temperature - step), temperature - step)
     energy = hot.internal_energy_j_kg - cold.internal_energy_j_kg
@@ -140,9 +136,7 @@ def test_gas_and_fluid_fill_the_bottle_and_the_nitrogen_stays(
 
 @law
 @given(charges, charged, temperatures, shares)
-def test_never_more_comes_out_than_was_in(
-    charge: GasCharge, start: float, temperature: float, share: float
-) -> None:
+def test_never_more_comes_out_than_was_in(charge: GasCharge, start: float, temperature: float, share: float) -> None:
     inside = fluid_volume_m3(charge, start, temperature)
     end = start * share
     assert 0.0 <= usable_slow_m3(charge, start, end, temperature) <= inside * (1 + 1e-12)
@@ -278,9 +272,7 @@ def test_bleeding_takes_at_least_the_time_of_the_first_flow_and_ends_with_what_c
     assert found.fast_m3 <= found.slow_m3 * (1 + 1e-9)
     assert found.slow_s >= found.slow_m3 / most * (1 - 1e-9)
     assert found.fast_s >= found.fast_m3 / most * (1 - 1e-9)
-    wider = bleed_down(
-        charge, start, start * share, temperature, Outlet(flow_coefficient=10.0, specific_gravity=0.9)
-    )
+    wider = bleed_down(charge, start, start * share, temperature, Outlet(flow_coefficient=10.0, specific_gravity=0.9))
     assert wider.slow_s == pytest.approx(found.slow_s / 2, rel=1e-9)
 
 

@@ -4,14 +4,14 @@ from typing import Any
 
 import pytest
 from hypothesis import HealthCheck, given, settings
+from tests.properties.oracle import check_all
+from tests.properties.planning import example, network_of, places, unit_from, written
+from tests.properties.strategies import unit_data
 
 from provenzero.network.compile import compile_network
 from provenzero.plan.make import make_plan
 from provenzero.plan.model import Plan
 from provenzero.proof.prove import prove
-from tests.properties.oracle import check_all
-from tests.properties.planning import example, network_of, places, unit_from, written
-from tests.properties.strategies import unit_data
 
 UNITS = ("land-rig", "jack-up", "workover")
 

@@ -122,7 +122,7 @@ def _once(made: "Permit") -> Callable[[], str]:
             from provenzero.render.html import html  # noqa: PLC0415 - not needed for JSON alone
             from provenzero.render.svg import svg  # noqa: PLC0415
 
-            kept.append(html(made.document, "".join(svg(sheet) for sheet in made.drawings)))
+            kept.append(html(made.document, *(svg(sheet) for sheet in made.drawings)))
         return kept[0]
 
     return pages

@@ -21,7 +21,8 @@ BACKED_OFF = "backed_off"
 
 def pressure_line(builder: Builder, item: Regulator) -> None:
     """Make the line a regulator serves, so that others can refer to it."""
-    builder.line(item.serves, f"{item.serves} line")
+    words = item.serves.replace("-", " ")
+    builder.line(item.serves, words if words.endswith("line") else f"{words} line")
 
 
 def regulator(builder: Builder, item: Regulator, *, common_returns: bool) -> None:
@@ -48,7 +49,7 @@ def regulator(builder: Builder, item: Regulator, *, common_returns: bool) -> Non
         Device(
             tag=DeviceTag(item.tag),
             kind=DeviceKind.REGULATOR,
-            name=f"regulator, {item.serves} line",
+            name=f"regulator, {builder.lines[serves].name}",
             location=item.location,
             positions=positions,
             normal=SET,
