@@ -117,9 +117,8 @@ def _planner() -> list[str]:
                 raise SystemExit("the sized unit has no plan")
         took = statistics.median(times)
         points.append((len(network.devices), took))
-        print(
-            f"plan functions={functions} banks={banks} pumps={pumps} devices={len(network.devices)} seconds={took:.3f}"
-        )
+        size = f"functions={functions} banks={banks} pumps={pumps} devices={len(network.devices)}"
+        print(f"plan {size} seconds={took:.3f}")
     (few, quick), (many, slow) = points[0], points[-1]
     exponent = log(slow / quick) / log(many / few)
     missed = [f"planning took {took:.2f} s"] if took > PLAN_LIMIT_S else []

@@ -1,4 +1,4 @@
-"""Descriptions of units of every kind that the schema allows: 1 to 4 banks and pumps, 1 to 8 functions, every option."""
+"""Descriptions of units of every kind that the schema allows: 1 to 4 banks and pumps, 1 to 8 functions."""
 
 from typing import Any
 

@@ -31,6 +31,7 @@ from provenzero.unit.model import ATMOSPHERE, HEADER, RESERVOIR, RETURNS, Unit
 
 WIDTH_MM = 190.0
 HEIGHT_MM = 250.0
+SMALLEST = 0.92
 _SUCTION_AT = 2.2
 _LEFT_AT = 4.6
 _GAP = 0.8
@@ -43,21 +44,52 @@ _NARROW = 76.0
 
 
 @dataclass(frozen=True, slots=True)
+class _Paper:
+    """What a sheet may measure, in millimetres of the shapes; on paper that is `scale` times as much."""
+
+    scale: float
+
+    @property
+    def width(self) -> float:
+        return WIDTH_MM / self.scale
+
+    @property
+    def height(self) -> float:
+        return HEIGHT_MM / self.scale
+
+
+@dataclass(frozen=True, slots=True)
 class _Sheet:
+    """The blocks of a sheet: the left column, then the columns with corridors of their own."""
+
     left: tuple[Block, ...]
     panes: tuple[tuple[Block, ...], ...]
 
 
 def overview(unit: Unit, network: Network, marks: Marks, wording: Wording = ENGLISH) -> tuple[Drawing, ...]:
-    """Draw a unit with its marks, each device once, on sheets of at most 190 by 250 mm."""
+    """Draw a unit with its marks, each device once, on sheets of at most 190 by 250 mm.
+
+    The letters are 2.4 mm high or more; where that saves a sheet all is drawn a little smaller, with letters of 2.2 mm.
+    """
     scene = Scene(unit=unit, network=network, marks=marks, wording=wording, letters=letters_of(unit))
+    best: tuple[list[_Sheet], _Paper] | None = None
+    for paper in (_Paper(1.0), _Paper(SMALLEST)):
+        sheets = _sheets(scene, paper)
+        if best is None or len(sheets) < len(best[0]):
+            best = sheets, paper
+        if len(sheets) == 1:
+            break
+    found, on = best if best is not None else ([], _Paper(1.0))
+    return tuple(_draw(scene, sheet, on, number, len(found)) for number, sheet in enumerate(found, start=1))
+
+
+def _sheets(scene: Scene, paper: _Paper) -> list[_Sheet]:
     silent = frozenset({*scene.letters, AIR, LineId(RESERVOIR), LineId(ATMOSPHERE)})
-    room = WIDTH_MM - _LEFT_AT - width_of(_shared(unit))
+    room = paper.width - _LEFT_AT - width_of(_shared(scene.unit))
     narrow = _right(scene, _NARROW, silent)
     left = _left(scene, max(room - _column(narrow), room / 2), silent)
     wide = _right(scene, room - _column(left), silent)
-    sheets = min((_divide(scene, left, right) for right in (wide, narrow)), key=len)
-    return tuple(_draw(scene, sheet, number, len(sheets)) for number, sheet in enumerate(sheets, start=1))
+    return min((_divide(scene, paper, left, right) for right in (wide, narrow)), key=len)
 
 
 def _shared(unit: Unit) -> list[LineId]:
@@ -96,18 +128,17 @@ def _left(scene: Scene, limit: float, silent: frozenset[LineId]) -> list[Block]:
     return [reservoir_block(scene, unit.reservoir, wide, silent), *rows, *shelves(panels, wide, _SHELF_GAP)]
 
 
-def _divide(scene: Scene, left: Sequence[Block], right: Sequence[Block]) -> list[_Sheet]:
+def _divide(scene: Scene, paper: _Paper, left: Sequence[Block], right: Sequence[Block]) -> list[_Sheet]:
     whole = _Sheet(tuple(left), (tuple(right),) if right else ())
-    if _width(scene, whole) <= WIDTH_MM and _height(scene, whole, "") <= HEIGHT_MM:
+    if _fits(scene, paper, whole, ""):
         return [whole]
     sheets = []
     makers, spenders = list(left), list(right)
     while makers or spenders:
-        first = _taken(scene, makers, _Sheet((), ()), into_left=True)
-        del makers[: len(first.left)]
-        sheet = first
+        sheet = _taken(scene, paper, makers, _Sheet((), ()), into_left=True)
+        del makers[: len(sheet.left)]
         for _ in range(2):
-            more = _taken(scene, spenders, sheet, into_left=False)
+            more = _taken(scene, paper, spenders, sheet, into_left=False)
             if more == sheet:
                 break
             del spenders[: len(more.panes[-1])]
@@ -116,17 +147,24 @@ def _divide(scene: Scene, left: Sequence[Block], right: Sequence[Block]) -> list
     return sheets
 
 
-def _taken(scene: Scene, blocks: Sequence[Block], sheet: _Sheet, *, into_left: bool) -> _Sheet:
+def _taken(scene: Scene, paper: _Paper, blocks: Sequence[Block], sheet: _Sheet, *, into_left: bool) -> _Sheet:
     """The sheet with as many more blocks as fit, in a new column; at least one on an empty sheet."""
     best = sheet
     for count in range(1, len(blocks) + 1):
         some = tuple(blocks[:count])
         tried = _Sheet(some, ()) if into_left else _Sheet(sheet.left, (*sheet.panes, some))
-        fits = _width(scene, tried) <= WIDTH_MM and _height(scene, tried, "-") <= HEIGHT_MM
-        if not fits and (count > 1 or sheet != _Sheet((), ())):
+        if not _fits(scene, paper, tried, "-") and (count > 1 or sheet != _Sheet((), ())):
             break
         best = tried
     return best
+
+
+def _fits(scene: Scene, paper: _Paper, sheet: _Sheet, number: str) -> bool:
+    width = _width(scene, sheet)
+    if width > paper.width or max(_stack(sheet.left), *(_stack(pane) for pane in sheet.panes), 0.0) > paper.height:
+        return False
+    foot = max(column.foot for column in _laid(scene, sheet))
+    return foot + legend_block(scene, width, number).height <= paper.height
 
 
 def _column(blocks: Sequence[Block]) -> float:
@@ -152,11 +190,6 @@ def _width(scene: Scene, sheet: _Sheet) -> float:
     )
 
 
-def _height(scene: Scene, sheet: _Sheet, number: str) -> float:
-    body = max(_stack(sheet.left) + _TOP, *(_stack(pane) + _top(pane) for pane in sheet.panes), 0.0)
-    return body + legend_block(scene, _width(scene, sheet), number).height
-
-
 def _top(pane: Sequence[Block]) -> float:
     """Where a column begins, so that no line of it meets the rings at the head of the corridor."""
     if not pane:
@@ -165,32 +198,52 @@ def _top(pane: Sequence[Block]) -> float:
     return max(_TOP, _LEAST_TAP - first.up - min((tap.offset for tap in first.left), default=0.0))
 
 
-def _draw(scene: Scene, sheet: _Sheet, number: int, count: int) -> Drawing:
+@dataclass(frozen=True, slots=True)
+class _Column:
+    """A corridor with what stands left and right of it, all in place."""
+
+    way: Corridor
+    made: tuple[Placed, ...]
+    spent: tuple[Placed, ...]
+
+    @property
+    def foot(self) -> float:
+        return max((item.y + item.block.down + _GAP for item in (*self.made, *self.spent)), default=0.0)
+
+
+def _laid(scene: Scene, sheet: _Sheet) -> list[_Column]:
+    columns = []
+    x = _LEFT_AT + _column(sheet.left) if sheet.left else 0.0
+    for place, pane in enumerate(sheet.panes or ((),)):
+        makers = sheet.left if place == 0 else ()
+        way = corridor(_lines_of(scene, makers, pane), x)
+        spent = stacked(pane, way.right, _top(pane), _GAP)
+        made = _settled(makers, spent, way, max(_stack(makers) + _TOP, _stack(pane) + _top(pane)))
+        columns.append(_Column(way, tuple(made), tuple(spent)))
+        x = way.right + _column(pane) + _GAP
+    return columns
+
+
+def _draw(scene: Scene, sheet: _Sheet, paper: _Paper, number: int, count: int) -> Drawing:
     canvas = Canvas(scene.marks.lines)
     width = _width(scene, sheet)
     words = scene.wording.sheet.format(number=number, count=count) if count > 1 else ""
+    columns = _laid(scene, sheet)
+    for column in columns:
+        for item in column.made:
+            item.block.draw(canvas, item.x, item.y, column.way.left)
+        for item in column.spent:
+            item.block.draw(canvas, item.x, item.y, item.x)
+        ringed = frozenset(column.way.at) if count > 1 else frozenset({LineId(RETURNS)})
+        draw_corridor(canvas, scene, column.way, column.made, column.spent, ringed)
+        _suction(canvas, scene, column.made, ringed=count > 1)
+    foot = max(column.foot for column in columns)
     legend = legend_block(scene, width, words)
-    x = _LEFT_AT + _column(sheet.left) if sheet.left else 0.0
-    foot = 0.0
-    panes = sheet.panes or ((),)
-    for place, pane in enumerate(panes):
-        makers = sheet.left if place == 0 else ()
-        lines = _lines_of(scene, makers, pane)
-        way = corridor(lines, x)
-        spent = stacked(pane, way.right, _top(pane), _GAP)
-        made = _settled(makers, spent, way, max(_stack(makers) + _TOP, _stack(pane) + _top(pane)))
-        _put(canvas, made, way.left)
-        _put(canvas, spent, 0.0)
-        ringed = frozenset(lines) if count > 1 else frozenset({LineId(RETURNS)})
-        draw_corridor(canvas, scene, way, made, spent, ringed)
-        _suction(canvas, scene, made, ringed=count > 1)
-        foot = max([foot, *(item.y + item.block.down + _GAP for item in (*made, *spent))])
-        x = way.right + _column(pane) + _GAP
     legend.draw(canvas, 0.0, foot, 0.0)
-    shown = [name for block in (*sheet.left, *(b for pane in panes for b in pane)) for name in block.names]
+    shown = [name for column in columns for item in (*column.made, *column.spent) for name in item.block.names]
     return Drawing(
-        width_mm=round(width, 2), height_mm=round(foot + legend.height, 2), title=title(scene, number, count),
-        alt=alternative(scene, number, count, shown), groups=canvas.groups(),
+        width_mm=round(width * paper.scale, 2), height_mm=round((foot + legend.height) * paper.scale, 2), scale=paper.scale,
+        title=title(scene, number, count), alt=alternative(scene, number, count, shown), groups=canvas.groups(),
     )
 
 
@@ -202,11 +255,6 @@ def _settled(makers: Sequence[Block], spent: Sequence[Placed], way: Corridor, bo
         if short <= 0.0:
             return placed
         bottom += short
-
-
-def _put(canvas: Canvas, placed: Sequence[Placed], end: float) -> None:
-    for item in placed:
-        item.block.draw(canvas, item.x, item.y, end)
 
 
 def _suction(canvas: Canvas, scene: Scene, made: Sequence[Placed], *, ringed: bool) -> None:

@@ -21,9 +21,9 @@ from provenzero.network.model import LineId
 
 BOX_MARGIN = 0.9
 DOT = 0.65
-BAND = 2.2
-CORE = 1.4
-_HATCH_STEP = 1.3
+BAND = 1.9
+CORE = 1.2
+_HATCH_STEP = 1.2
 _ORDER = (Role.ZONE, Role.DEAD, Role.NEUTRAL, Role.UNKNOWN, Role.TRAPPED, Role.LIVE)
 _KINDS = (Kind.LINE, Kind.SYMBOL, Kind.MARK, Kind.TAG, Kind.LABEL, Kind.LEGEND)
 

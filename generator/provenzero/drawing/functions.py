@@ -32,7 +32,7 @@ from provenzero.unit.model import RESERVOIR, RETURNS, Function
 _CLOSE_RUN = 3.9
 _VALVE_TOP = 6.9
 _VALVE_BOTTOM = _VALVE_TOP + SIDE
-_SUPPLY_RUN = _VALVE_BOTTOM + 2.4
+_SUPPLY_RUN = _VALVE_BOTTOM + 2.1
 _APART = 2.4
 _CYLINDER = CYLINDER_LONG + 2.6
 _CYLINDER_PORTS = (1.2, 9.0)
@@ -111,7 +111,7 @@ def _measure(  # noqa: PLR0913 - a function, the room there is, and where its su
     above, _ = _side_by_side(fittings(scene, item.open_fittings, LineId(f"{item.name}.open")), at)
     below, at = _side_by_side(fittings(scene, item.close_fittings, LineId(f"{item.name}.close"), below=True), at)
     turn, supply, row_at = None, _SUPPLY_RUN, _SUPPLY_RUN
-    returns = supply + row.down + 1.3
+    returns = supply + max(row.down, 0.5) + 1.9
     if under:
         turn = max(row.width + 1.0, valve + SIDE + PORT_RIGHT + _APART)
         supply = _VALVE_TOP + max(SIDE, end.down if turn > mover - 1.0 else 0.0) + _APART
@@ -119,7 +119,7 @@ def _measure(  # noqa: PLR0913 - a function, the room there is, and where its su
         row_at = returns + row.up + 0.8
     beside = turn if turn is not None else valve + SIDE + PORT_RIGHT
     floor = max(
-        returns + 0.8 if scene.unit.common_returns else _VALVE_BOTTOM + 9.0, _VALVE_TOP + end.down, row_at + row.down,
+        returns + 0.9 if scene.unit.common_returns else _VALVE_BOTTOM + 9.0, _VALVE_TOP + end.down, row_at + row.down,
         *(_CLOSE_RUN + cell.down for cell, _ in below),
         _vent_top(end, margin) + VENT_HEIGHT if scene.vent(item.valve.tag) is not None else 0.0,
     )

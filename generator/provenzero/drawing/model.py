@@ -163,10 +163,14 @@ class Group:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Drawing:
-    """One sheet [mm], with a title and the words for somebody who cannot see it."""
+    """One sheet, with a title and the words for somebody who cannot see it.
+
+    Width and height are those on paper [mm]; a millimetre of the shapes is `scale` millimetres on paper.
+    """
 
     width_mm: float
     height_mm: float
+    scale: float
     title: str
     alt: str
     groups: tuple[Group, ...]

@@ -29,7 +29,7 @@ def regulator_block(
     row = Row(scene, feed, cells, limit_mm=limit_mm, silent=silent)
     rows = [Row(scene, LineId(n.from_line), [through(scene, n.valve)], limit_mm=limit_mm, silent=silent) for n in links]
     join = max((link.width for link in rows), default=0.0) + 1.0
-    regulator_end = sum(cell.left + cell.right for cell in cells[: len(item.upstream) + 1])
+    regulator_end = row.ends[len(item.upstream) + 1]
     name_at = max(regulator_end, join) + 1.0 if row.out == 0.0 else join + 1.0
     told = scene.told(serves)
     width = max(row.width + 1.0, name_at + name_width(scene, serves) + 1.6)

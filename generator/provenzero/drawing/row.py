@@ -34,6 +34,7 @@ class Row:
     """A row of cells from one end to the other. `first`: the line at its left end. `silent`: lines named elsewhere.
 
     `from_first`: the line begins under the first cell and not at the left end. `run_out`: free line after the last cell.
+    Afterwards `ends` tells where each cell ends if all stand on one level.
     """
 
     def __init__(  # noqa: PLR0913 - a row is its cells and its two ends
@@ -46,6 +47,7 @@ class Row:
         roomy = self._with_room(cells, run_out, -cells[0].left if from_first and cells else 0.0)
         self._begin = roomy[0].left if from_first and roomy else 0.0
         self._levels = _spread(roomy, limit_mm)
+        self.ends = _ends(roomy)
         self.width = max(_width(level.cells) for level in self._levels)
         if len(self._levels) > 1:
             self.width += _TURN
@@ -133,6 +135,13 @@ def _spread(cells: list[Cell], limit_mm: float) -> list[_Level]:
             offset = levels[-1].offset + levels[-1].down + _TURN + max(cell.up for cell in group)
         levels.append(_Level(group, offset, max((cell.down for cell in group), default=0.5)))
     return levels
+
+
+def _ends(cells: list[Cell]) -> list[float]:
+    ends = [0.0]
+    for cell in cells:
+        ends.append(ends[-1] + cell.left + cell.right)
+    return ends
 
 
 def _width(cells: list[Cell]) -> float:

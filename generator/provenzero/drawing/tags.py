@@ -13,7 +13,6 @@ TAG_MM = 2.6
 PITCH = 2.9
 TAG_LIMIT = 13.0
 LABEL_MM = 2.4
-_VENT_MM = 2.3
 LABEL_HEIGHT = 3.3
 LOCK_HALF = 2.7
 VENT_HEIGHT = 5.6
@@ -149,7 +148,7 @@ def leader(canvas: Canvas, line: LineId, start: Point, end: Point) -> None:
 def vent_width(scene: Scene, where: Vent) -> float:
     """Width of the mark of an open vent [mm]."""
     lines = (scene.wording.open_to, _where(scene, where))
-    return _VENT_ARROW + GAP + max(width_mm(line, _VENT_MM, bold=True) for line in lines)
+    return _VENT_ARROW + GAP + max(width_mm(line, LABEL_MM, bold=True) for line in lines)
 
 
 def vent_mark(canvas: Canvas, scene: Scene, where: Vent, corner: Point, *names: str) -> None:
@@ -158,7 +157,7 @@ def vent_mark(canvas: Canvas, scene: Scene, where: Vent, corner: Point, *names: 
     shapes: list[Shape] = [down_arrow((x + _VENT_ARROW / 2, y), VENT_HEIGHT)]
     for place, words in enumerate((scene.wording.open_to, _where(scene, where))):
         at = (x + _VENT_ARROW + GAP, y + 2.1 + place * 2.8)
-        shapes.append(Text(at=at, words=words, size_mm=_VENT_MM, anchor=Anchor.START, bold=True))
+        shapes.append(Text(at=at, words=words, size_mm=LABEL_MM, anchor=Anchor.START, bold=True))
     canvas.add(Kind.MARK, shapes, *names, role=Role.VENTED)
 
 

@@ -28,8 +28,8 @@ _WIDTHS = {
     Pen.DEAD: 0.3,
     Pen.TRAPPED: 0.55,
     Pen.UNKNOWN: 0.45,
-    Pen.ZONE_EDGE: 2.2,
-    Pen.ZONE_CORE: 1.4,
+    Pen.ZONE_EDGE: 1.9,
+    Pen.ZONE_CORE: 1.2,
     Pen.HATCH: 0.22,
     Pen.SYMBOL: 0.28,
     Pen.FINE: 0.18,
@@ -48,9 +48,10 @@ _ANCHORS = {Anchor.START: "start", Anchor.MIDDLE: "middle", Anchor.END: "end"}
 def svg(drawing: Drawing) -> str:
     """The drawing as one SVG element with its title and its words for those who cannot see it."""
     width, height = _number(drawing.width_mm), _number(drawing.height_mm)
+    wide, tall = _number(drawing.width_mm / drawing.scale), _number(drawing.height_mm / drawing.scale)
     parts = [
         f'<svg xmlns="http://www.w3.org/2000/svg" class="circuit" role="img" aria-label="{escape(drawing.alt)}" '
-        f'width="{width}mm" height="{height}mm" viewBox="0 0 {width} {height}" font-family="{FAMILY}" '
+        f'width="{width}mm" height="{height}mm" viewBox="0 0 {wide} {tall}" font-family="{FAMILY}" '
         f'stroke-linejoin="miter">',
         f"<title>{escape(drawing.title)}</title>",
         f"<desc>{escape(drawing.alt)}</desc>",
@@ -119,4 +120,4 @@ def _points(points: tuple[Point, ...]) -> str:
 
 def _number(value: float) -> str:
     """A length with two decimals at most."""
-    return f"{value:.2f}".rstrip("0").rstrip(".").replace("-0", "0") if abs(value) < 0.005 else f"{value:.2f}".rstrip("0").rstrip(".")
+    return f"{round(value, 2) + 0.0:.2f}".rstrip("0").rstrip(".")
