@@ -13,7 +13,7 @@ def _fits(job: Job, facts: dict[str, str]) -> bool:
     return all(facts.get(c.attribute) in c.allowed for c in job.conditions)
 
 
-def _equipment(kind: Equipment, unit: Unit) -> list[tuple[str, dict[str, str]]]:
+def _equipment(kind: Equipment, unit: Unit) -> list[tuple[str, dict[str, str]]]:  # noqa: PLR0911 - one a kind
     """The pieces of a kind with the attributes that a job may ask for."""
     match kind:
         case Equipment.FUNCTION:
@@ -28,9 +28,7 @@ def _equipment(kind: Equipment, unit: Unit) -> list[tuple[str, dict[str, str]]]:
             return [(b.valve.tag, {}) for b in unit.bypasses]
         case Equipment.BOTTLE:
             return [
-                (f"{b.tag}/{n}", {"separator": b.separator.value})
-                for b in unit.banks
-                for n in range(1, b.bottles + 1)
+                (f"{b.tag}/{n}", {"separator": b.separator.value}) for b in unit.banks for n in range(1, b.bottles + 1)
             ]
         case Equipment.UNIT:
             return [("unit", {})]

@@ -6,10 +6,13 @@ from pathlib import Path
 from typing import Any
 
 from provenzero.catalogue.job import Condition, Equipment, Job, Leave, TestKind
-from provenzero.finding import Finding, has_errors
+from provenzero.finding import Finding, Place, has_errors
 from provenzero.reading.lines import Document, load, load_text
 from provenzero.reading.schema import check
 from provenzero.resources import checklists
+
+_ENDINGS = frozenset({".yaml", ".yml"})
+_FOLDER = "a folder with the job files of the site"
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -34,11 +37,31 @@ def catalogue(own: Path | None = None) -> Catalogue:
             if isinstance(document, Document):  # the tests hold every shipped file against its schema
                 job = job_of(document.data)
                 found[job.id] = job
-    for path in sorted(own.glob("*.yaml")) if own is not None else ():
+    if own is not None:
+        of_site = read_folder(own)
+        findings += of_site.findings
+        found.update({j.id: j for j in of_site.jobs})
+    return Catalogue(jobs=tuple(found[k] for k in sorted(found)), findings=tuple(findings))
+
+
+def read_folder(folder: Path) -> Catalogue:
+    """Read the job files of a folder of the site, each job once."""
+    if not folder.is_dir():
+        place = Place(file=str(folder))
+        return Catalogue(jobs=(), findings=(Finding(place=place, found="no such folder", expected=_FOLDER),))
+    files: dict[str, Path] = {}
+    jobs: list[Job] = []
+    findings: list[Finding] = []
+    for path in sorted(p for p in folder.iterdir() if p.suffix in _ENDINGS):
         read = read_job(path)
         findings += read.findings
-        found.update({j.id: j for j in read.jobs})
-    return Catalogue(jobs=tuple(found[k] for k in sorted(found)), findings=tuple(findings))
+        for job in read.jobs:
+            if job.id in files:
+                found = f"the job {job.id} a second time (first in {files[job.id].name})"
+                findings.append(Finding(place=Place(file=str(path), path="job"), found=found, expected="each job once"))
+            files.setdefault(job.id, path)
+            jobs.append(job)
+    return Catalogue(jobs=tuple(jobs), findings=tuple(findings))
 
 
 def read_job(path: Path) -> Catalogue:

@@ -33,7 +33,7 @@ def main() -> None:
     except KeyboardInterrupt:
         print_error("stopped; nothing half-written was left")
         sys.exit(130)
-    except Exception as error:  # noqa: BLE001 - the one place where anything is caught
+    except Exception as error:  # the one place where anything is caught
         print_error(f"a fault of this program, not of your files: {type(error).__name__}: {error}")
         print_error("nothing was written; please report it with the command and the files you gave")
         sys.exit(70)

@@ -9,7 +9,9 @@ from provenzero.cli.report import BAD_INPUT, mistake, say, tell
 
 
 def new(
-    file: Annotated[Path, typer.Argument(help="Where to write it; never over a file that is there.")] = Path("unit.yaml"),
+    file: Annotated[Path, typer.Argument(help="Where to write it; never over a file that is there.")] = Path(
+        "unit.yaml"
+    ),
 ) -> None:
     """Write a commented description of a unit to start from.
 

@@ -31,7 +31,7 @@ class Pressure(StrEnum):
 FORMATS = ("pdf", "html", "json")
 
 
-def permit(  # noqa: PLR0913 - each is an option that people asked for
+def permit(  # noqa: PLR0913, PLR0917 - each is an option of the command line, given there by its name
     unit: Annotated[Path, typer.Argument(help="Description of the unit (YAML).")],
     job: Annotated[str, typer.Option(help="What is done; `provenzero jobs UNIT` lists it.")],
     on: Annotated[str, typer.Option(help="Name or tag of the piece of equipment.")],
@@ -50,7 +50,6 @@ def permit(  # noqa: PLR0913 - each is an option that people asked for
     Exit code 0: written. 1: refused, no safe plan was found or proven. 2: bad input.
 
     Examples:
-
     provenzero permit rig-7.yaml --job replace-hoses --on upper-pipe-rams --out out
 
     provenzero permit rig-7.yaml --job overhaul-air-pump --on P-2 --format pdf,json --paper letter
@@ -61,8 +60,15 @@ def permit(  # noqa: PLR0913 - each is an option that people asked for
     wanted = _formats(formats)
     now = datetime.now(UTC).astimezone().strftime("%Y-%m-%d %H:%M %Z")
     request = pipeline.Request(
-        unit_file=unit, job=job, on=on, issued=issued or now, number=number, company=company,
-        paper=paper.value, units=units.value, own_jobs=own_jobs,
+        unit_file=unit,
+        job=job,
+        on=on,
+        issued=issued or now,
+        number=number,
+        company=company,
+        paper=paper.value,
+        units=units.value,
+        own_jobs=own_jobs,
     )
     asked = pipeline.ask(request)
     if isinstance(asked, pipeline.Mistake):
@@ -102,11 +108,17 @@ def _write(made: "Permit", out: Path, stem: str, wanted: list[str]) -> None:
     """Write all formats; the PDF last, for it is the one that may lack its library."""
     from provenzero.reading.write import write_atomically  # noqa: PLC0415 - as above
 
+    try:
+        out.mkdir(parents=True, exist_ok=True)
+    except FileExistsError:
+        mistake(f"{out}: found a file of that name", "expected --out with a folder to write in")
+    except (OSError, ValueError) as error:
+        reason = error.strerror if isinstance(error, OSError) else "no folder can have that name"
+        mistake(f"{out}: found a folder that cannot be made ({reason})", "expected --out with a folder to write in")
     pages = _once(made)
     for form in sorted(wanted, key=lambda f: f == "pdf"):
         target = out / f"{stem}.{form}"
-        content = _content(made, form, pages)
-        fault = write_atomically(target, content)
+        fault = write_atomically(target, _content(made, form, pages))
         if fault is not None:
             tell(str(fault))
             raise typer.Exit(BAD_INPUT)

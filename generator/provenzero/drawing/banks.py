@@ -129,14 +129,15 @@ def _bottles_cell(scene: Scene, item: Bank, group: _Bottles, fluid: LineId) -> C
                 upright_shut_off(group.position == "open"), (x, y - _STEM - _VALVE_TALL / 2), *valves, boxed=shut_locked
             )
             canvas.wire(side, (x, y - _STEM - _VALVE_TALL), (x, y - foot))
+            canvas.alike(side, [LineId(f"{key}.fluid") for key in keys[1:]])
             _beside_valve(canvas, group, valve_words, body, valves)
         else:
             canvas.wire(side, (x, y), (x, y - foot))
         canvas.symbol(bottle(item.separator), (x, y - foot), *keys, *([item.tag] if group.first == 1 else []))
         words.words(canvas, x - BOTTLE_HALF - ROOM - words.width, y - foot - 6.6, *keys)
         nub = y - foot - BOTTLE_HEIGHT
-        for key in keys:
-            canvas.wire(LineId(f"{key}.gas"), (x, nub), (x, nub - _NUB))
+        canvas.wire(LineId(f"{keys[0]}.gas"), (x, nub), (x, nub - _NUB))
+        canvas.alike(LineId(f"{keys[0]}.gas"), [LineId(f"{key}.gas") for key in keys[1:]])
         gas = [f"{key}-gas" for key in keys]
         body = canvas.symbol(
             gas_valve(group.gas_position == "venting"), (x, nub - _NUB - 1.1), *gas, boxed=group.gas_lock is not None

@@ -35,6 +35,7 @@ class Canvas:
         self._roles = roles
         self._wires: dict[LineId, list[tuple[Point, ...]]] = {}
         self._dots: dict[LineId, list[Point]] = {}
+        self._alike: dict[LineId, list[LineId]] = {}
         self._groups: list[Group] = []
 
     def wire(self, line: LineId, *points: Point) -> None:
@@ -45,6 +46,10 @@ class Canvas:
                 kept.append(point)
         if len(kept) > 1:
             self._wires.setdefault(line, []).append(tuple(kept))
+
+    def alike(self, line: LineId, others: Iterable[LineId]) -> None:
+        """Say that the pieces of a line also stand for others of which the same is to be shown."""
+        self._alike.setdefault(line, []).extend(others)
 
     def dot(self, line: LineId, at: Point) -> None:
         """Mark that lines are joined here."""
@@ -88,7 +93,7 @@ class Canvas:
             shapes += [Polyline(points=piece, pen=Pen(role.value)) for piece in pieces]
         radius = DOT if role is not Role.ZONE else DOT + 0.2
         shapes += [Circle(centre=at, radius=radius, pen=Pen.NONE, fill=Fill.INK) for at in self._dots.get(line, ())]
-        return Group(kind=Kind.LINE, role=role, names=(line,), shapes=tuple(shapes))
+        return Group(kind=Kind.LINE, role=role, names=(line, *self._alike.get(line, ())), shapes=tuple(shapes))
 
 
 def band(points: tuple[Point, ...]) -> list[Shape]:

@@ -8,6 +8,7 @@ from provenzero.drawing.canvas import BOX_MARGIN, Canvas
 from provenzero.drawing.model import Box
 from provenzero.drawing.scene import Inline, Scene
 from provenzero.drawing.symbols import (
+    RING_RADIUS,
     TANK_TOP,
     Symbol,
     check_valve,
@@ -207,15 +208,17 @@ def _branch(scene: Scene, parts: list[Part], line: LineId, to: LineId | None, *,
     for one, other in pairwise(parts):
         apart = max(one.right + ROOM + other.left, one.body.right + LEAD - other.body.left)
         places.append(places[-1] + apart)
-    out = places[-1] + parts[-1].body.right + 1.2
+    beside = outlet_half(to)
+    out = places[-1] + parts[-1].body.right + beside + (0.2 if to in (RESERVOIR, ATMOSPHERE) else 1.0)
     where = scene.vent(parts[0].name)
     stub = scene.ends(parts[0].name)[1] if to is None else None
     told = scene.told(stub) if stub is not None else ""
     edge = max((p.body.bottom if below else -p.body.top) + p.words.reach for p in parts)
     if below and to is not None:
         edge = max(edge, 4.6)
-    width = max(0.0 if where is None else vent_width(scene, where), label_width(told) if told else 0.0)
-    right = max(out + 1.9 if to is not None else 0.0, places[-1] + parts[-1].right, width) + ROOM
+    mark = 0.0 if where is None else vent_width(scene, where) + GAP
+    width = mark + (label_width(told) if told else 0.0)
+    right = max(out + beside if to is not None else 0.0, places[-1] + parts[-1].right, width) + ROOM
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
         level = y + sign * RISE
@@ -226,20 +229,28 @@ def _branch(scene: Scene, parts: list[Part], line: LineId, to: LineId | None, *,
             part.paint(canvas, (x + place, level), below=below)
             here = stub or to or line
             points = [(x + place + part.symbol.body.right, level)]
-        if to is not None:
+        if to is not None and to in (RESERVOIR, ATMOSPHERE):
             canvas.wire(to, *points, (x + out, level), (x + out, level + _DROP))
             outlet(canvas, scene, to, (x + out, level + _DROP))
+        elif to is not None:
+            canvas.wire(to, *points, (x + out - beside, level))
+            outlet(canvas, scene, to, (x + out, level - RING_RADIUS))
         beyond = level + sign * (edge + GAP)
         if where is not None:
             vent_mark(canvas, scene, where, (x, beyond if below else beyond - VENT_HEIGHT), parts[0].name)
         if stub is not None and told:
-            label(canvas, scene, stub, (x + label_width(told) / 2, beyond + sign * LABEL_HEIGHT / 2))
+            label(canvas, scene, stub, (x + mark + label_width(told) / 2, beyond + sign * LABEL_HEIGHT / 2))
 
     extra = GAP + max(0.0 if where is None else VENT_HEIGHT, LABEL_HEIGHT if told else 0.0)
     return _on_line(
         line, max(parts[0].left - places[0], 0.5) + ROOM, right, RISE + edge + (extra if width else 0.0),
         below=below, paint=paint,
     )
+
+
+def outlet_half(to: LineId | None) -> float:
+    """Half the width of the end of a line that lets out [mm]."""
+    return tank().body.right if to in (RESERVOIR, ATMOSPHERE) else RING_RADIUS
 
 
 def outlet(canvas: Canvas, scene: Scene, to: LineId, at: tuple[float, float], *names: str) -> None:
@@ -250,4 +261,4 @@ def outlet(canvas: Canvas, scene: Scene, to: LineId, at: tuple[float, float], *n
     elif to == ATMOSPHERE:
         canvas.symbol(outlet_to_air(), centre, *names)
     else:
-        canvas.symbol(ring(scene.letters.get(to, "?")), (at[0], at[1] + 1.9), *names)
+        canvas.symbol(ring(scene.letters.get(to, "?")), (at[0], at[1] + RING_RADIUS), *names)

@@ -15,11 +15,15 @@ from provenzero.unit.model import Isolator, Valve
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Feed:
-    """A chain that ends where the energy is used. `draw` takes the right end and the height of the chain."""
+    """A chain that ends where the energy is used. `draw` takes the right end and the height of the chain.
+
+    `near`: how high it stands close to its right end [mm].
+    """
 
     width: float
     up: float
     down: float
+    near: float
     draw: Callable[[Canvas, float, float], None]
 
 
@@ -32,7 +36,7 @@ def feed(scene: Scene, words: str, supply: LineId, load: LineId, device: Valve |
             canvas.symbol(flag, (right - LEAD, y))
             canvas.wire(supply, (right - LEAD, y), (right, y))
 
-        return Feed(width=wide + LEAD, up=tall, down=tall, draw=bare)
+        return Feed(width=wide + LEAD, up=tall, down=tall, near=tall, draw=bare)
     if isinstance(device, Valve):
         symbol = shut_off(scene.position(device.tag) == "open", device.exhausts)
     else:
@@ -42,7 +46,8 @@ def feed(scene: Scene, words: str, supply: LineId, load: LineId, device: Valve |
     told = scene.told(load)
     after = LEAD + (label_width(told) + 1.0 if told else 0.0)
     right = max(part.body.right + after, part.right + ROOM)
-    left = max(LEAD - part.body.left, part.left - wide + ROOM)
+    beside = part.words.lock is not None or tall > part.body.bottom
+    left = max(LEAD - part.body.left, part.left + ROOM if beside else 0.0)
     mark = 0.0 if where is None else vent_width(scene, where) + GAP
 
     def draw(canvas: Canvas, end: float, y: float) -> None:
@@ -58,5 +63,5 @@ def feed(scene: Scene, words: str, supply: LineId, load: LineId, device: Valve |
     return Feed(
         width=max(wide + left, part.left + mark) + right,
         up=max(part.words.reach - part.body.top, tall + (VENT_HEIGHT + GAP if mark else 0.0)),
-        down=max(part.body.bottom, LABEL_HEIGHT / 2, tall), draw=draw,
+        down=max(part.body.bottom, LABEL_HEIGHT / 2, tall), near=part.words.reach - part.body.top, draw=draw,
     )

@@ -61,7 +61,7 @@ def _pump_cell(scene: Scene, item: Pump, suction: LineId, discharge: LineId, bef
     rise, left = PUMP_RADIUS + _SHAFT + DRIVE_RADIUS, half
     if energy is not None:
         left = max(half, energy.width + DRIVE_RADIUS + ROOM - sum(cell.left + cell.right for cell in before))
-        rise = max(rise, max((cell.down for cell in before), default=0.0) + energy.up + 0.5)
+        rise = max(rise, max((cell.down for cell in before), default=0.0) + energy.up + 0.5, PUMP_RADIUS + energy.near + 0.2)
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
         body = canvas.symbol(pump(), (x, y), item.tag)

@@ -10,7 +10,7 @@ from provenzero.drawing.pumps import elements, fittings
 from provenzero.drawing.row import Row
 from provenzero.drawing.scene import AIR, Scene
 from provenzero.drawing.symbols import Symbol, regulator, ring
-from provenzero.drawing.tags import CORNER, LABEL_HEIGHT, LOCK_HALF, label, lock_half, lozenge, tag
+from provenzero.drawing.tags import CORNER, LABEL_HEIGHT, LOCK_HALF, label, label_width, lock_half, lozenge, tag
 from provenzero.network.model import LineId
 from provenzero.unit.model import RESERVOIR, Bypass, Regulator, RegulatorControl
 
@@ -32,17 +32,17 @@ def regulator_block(
     regulator_end = row.ends[len(item.upstream) + 1]
     name_at = max(regulator_end, join) + 1.0 if row.out == 0.0 else join + 1.0
     told = scene.told(serves)
-    width = max(row.width + 1.0, name_at + name_width(scene, serves) + 1.6)
+    right = max(row.width + 1.0, name_at + name_width(scene, serves) + 1.6)
     limb = row.down + (_LIMB if row.out == 0.0 else _LIMB + 3.0)
     heights: list[float] = []
-    foot = limb + 0.6
+    foot = limb + 1.1
     for link in rows:
         heights.append(foot + link.up)
         foot = heights[-1] + link.down
 
     def draw(canvas: Canvas, x: float, y: float, _: float) -> None:
-        row.draw(canvas, x, y, x + width)
-        canvas.wire(serves, (x + width, y + row.out), (x + width, y + limb), (x, y + limb))
+        row.draw(canvas, x, y, x + right)
+        canvas.wire(serves, (x + right, y + row.out), (x + right, y + limb), (x, y + limb))
         name_over(canvas, scene, serves, x + name_at + name_width(scene, serves) / 2, y + limb)
         for link, height in zip(rows, heights, strict=True):
             link.draw(canvas, x, y + height, x + join)
@@ -54,7 +54,7 @@ def regulator_block(
     taps = [Tap(feed), Tap(serves, limb)]
     taps += [Tap(LineId(link.from_line), height) for link, height in zip(links, heights, strict=True)]
     return Block(
-        names=(item.tag, *(link.valve.tag for link in links)), width=width, up=row.up,
+        names=(item.tag, *(link.valve.tag for link in links)), width=right + 1.0, up=row.up,
         down=max(limb + (_NAME_HALF if told else 1.1), foot), left=tuple(taps), draw=draw,
     )
 
@@ -63,14 +63,14 @@ def bypass_block(scene: Scene, item: Bypass, limit_mm: float, silent: frozenset[
     """One bypass valve between two lines of the corridor."""
     start, end = LineId(item.from_line), LineId(item.to_line)
     row = Row(scene, start, [through(scene, item.valve)], limit_mm=limit_mm, silent=silent)
-    limb, width = row.down + 1.0, row.width + 1.0
+    limb, right = row.down + 1.2, row.width + 1.0
 
     def draw(canvas: Canvas, x: float, y: float, _: float) -> None:
-        row.draw(canvas, x, y, x + width)
-        canvas.wire(end, (x + width, y), (x + width, y + limb), (x, y + limb))
+        row.draw(canvas, x, y, x + right)
+        canvas.wire(end, (x + right, y), (x + right, y + limb), (x, y + limb))
 
     return Block(
-        names=(item.valve.tag,), width=width, up=row.up, down=limb + 0.6, left=(Tap(start), Tap(end, limb)), draw=draw
+        names=(item.valve.tag,), width=right + 1.0, up=row.up, down=limb + 1.0, left=(Tap(start), Tap(end, limb)), draw=draw
     )
 
 
@@ -82,11 +82,12 @@ def _regulator_cell(scene: Scene, item: Regulator) -> Cell:
     tank = scene.port(item.tag, "return")
     air = _air_plate(scene)
     inlet = scene.port(item.tag, "inlet") or LineId(item.fed_from)
-    words_left = -0.4 if item.relieving else 0.8 - words.width / 2
+    words_left = (-0.4 if tank in scene.letters else 0.3) if item.relieving else 0.8 - words.width / 2
     told = bool(tank is not None and scene.told(tank) and tank not in scene.letters)
     up = -body.top + (1.4 + air.body.bottom - air.body.top if by_air else 0.0)
     ringed = tank in scene.letters
     drop = max(words.reach, 0.6 + (_RING / 2 if ringed else _TANK)) if item.relieving else words.reach
+    word = label_width(scene.told(tank)) if told and tank is not None else 0.0
     down = body.bottom + drop + (LABEL_HEIGHT + 0.5 if told else 0.0)
     ring_x = body.left - _RING / 2 - 0.3
     corner = 0.0 if lock is None else CORNER + 2 * lock_half(lock)
@@ -109,10 +110,10 @@ def _regulator_cell(scene: Scene, item: Regulator) -> Cell:
                 canvas.wire(tank, (x - 1.4, y + 4.3), (x - 1.4, low))
                 outlet(canvas, scene, LineId(RESERVOIR), (x - 1.4, low), f"{item.tag}-return")
             if told:
-                label(canvas, scene, tank, (x + 1.0, placed.bottom + 4.4 + LABEL_HEIGHT / 2))
+                label(canvas, scene, tank, (x - 2.8 + word / 2, placed.bottom + drop + 0.4 + LABEL_HEIGHT / 2))
 
     return Cell(
-        left=max(4.6, words.width / 2, corner - body.left, _RING / 2 - ring_x if ringed else 0.0), right=max(6.2, words_left + words.width + ROOM, air.body.right / 2),
+        left=max(4.6, words.width / 2, corner - body.left, _RING / 2 - ring_x if ringed else 0.0), right=max(6.2, words_left + words.width + ROOM, air.body.right / 2, word - 2.8 + ROOM),
         up=max(up, 0.0 if lock is None else LOCK_HALF - body.top), down=max(down, body.bottom + words.reach),
         line_in=inlet, line_out=LineId(item.serves), body=(symbol.body.left, symbol.body.right),
         clear=body.left - corner, paint=paint,

@@ -3,7 +3,8 @@
 from provenzero.drawing.block import Block, Tap
 from provenzero.drawing.canvas import Canvas
 from provenzero.drawing.cells import LEAD, device_cell, outlet, symbol_of
-from provenzero.drawing.model import Box, Fill, Pen, Shape, Text
+from provenzero.drawing.metric import width_mm
+from provenzero.drawing.model import Anchor, Box, Fill, Pen, Shape, Text
 from provenzero.drawing.plates import name_over, name_width
 from provenzero.drawing.row import Row
 from provenzero.drawing.scene import Scene
@@ -26,7 +27,8 @@ def reservoir_block(scene: Scene, item: Reservoir, width: float, silent: frozens
     limb = name_width(scene, returns) + 4.0 if scene.unit.common_returns else 0.0
     drain = _drain(scene, item, silent)
     beside = max(limb, drain.width + LEAD + 4.6 if drain is not None else 0.0)
-    right = max(width - beside, _LEFT + 24.0)
+    right = max(width - beside, _LEFT + 22.0 + width_mm(item.tag, TAG_MM, bold=True))
+    limb_at = _LIMB if drain is None else min(_LIMB, _OUTLET - drain.up - 1.2)
     tank = _tank(scene, item, right - _LEFT)
 
     def draw(canvas: Canvas, x: float, y: float, end: float) -> None:
@@ -39,8 +41,8 @@ def reservoir_block(scene: Scene, item: Reservoir, width: float, silent: frozens
             inlet = x + right - 3.0
             canvas.wire(LineId(RESERVOIR), (inlet, y), (inlet, y - 1.0))
             canvas.symbol(entry(), (inlet, y - 1.4), f"{item.tag}-returns")
-            canvas.wire(returns, (inlet, y - 1.8), (inlet, y + _LIMB), (end, y + _LIMB))
-            name_over(canvas, scene, returns, inlet + 1.5 + name_width(scene, returns) / 2, y + _LIMB)
+            canvas.wire(returns, (inlet, y - 1.8), (inlet, y + limb_at), (end, y + limb_at))
+            name_over(canvas, scene, returns, inlet + 1.5 + name_width(scene, returns) / 2, y + limb_at)
         if drain is not None:
             finish = x + right + drain.width + LEAD
             drain.draw(canvas, x + right, y + _OUTLET, finish)
@@ -48,9 +50,9 @@ def reservoir_block(scene: Scene, item: Reservoir, width: float, silent: frozens
             outlet(canvas, scene, LineId(ATMOSPHERE), (finish, y + _OUTLET + 1.0))
 
     down = max(_DEEP, 0.0 if drain is None else _OUTLET + drain.down, 0.0 if drain is None else _OUTLET + 3.8)
-    taps = (Tap(returns, _LIMB),) if scene.unit.common_returns else ()
+    taps = (Tap(returns, limb_at),) if scene.unit.common_returns else ()
     return Block(
-        names=(item.tag,), width=right + beside, up=6.4 + (1.2 if scene.told(returns) else 0.0), down=down + 0.4, left=(Tap(LIQUID, _OUTLET),), right=taps, draw=draw
+        names=(item.tag,), width=right + beside, up=2.8 - limb_at + (1.2 if scene.told(returns) else 0.0), down=down + 0.4, left=(Tap(LIQUID, _OUTLET),), right=taps, draw=draw
     )
 
 
@@ -66,9 +68,9 @@ def _tank(scene: Scene, item: Reservoir, width: float) -> Symbol:
     shapes: list[Shape] = [
         box(0, 0, width, _DEEP, pen=Pen.NONE), stroke((0, 0), (0, _DEEP), (width, _DEEP), (width, 0), pen=Pen.HEAVY),
         box(0.4, 2.6, width - 0.4, _DEEP - 0.4, fill=Fill.TINT, pen=Pen.NONE), stroke((0.3, 2.6), (width - 0.3, 2.6), pen=Pen.FINE),
-        Text(at=(width / 2, 6.0), words=item.tag, size_mm=TAG_MM, bold=True),
+        Text(at=(width - 1.5, 6.0), words=item.tag, size_mm=TAG_MM, anchor=Anchor.END, bold=True),
     ]
     space, fluid = LineId(RESERVOIR), LIQUID
-    shapes += label_shapes(scene, space, (2.0 + label_width(scene.told(space)) / 2, 1.3))
-    shapes += label_shapes(scene, fluid, (1.0 + label_width(scene.told(fluid)) / 2, _OUTLET))
+    shapes += label_shapes(scene, space, (1.0 + label_width(scene.told(space)) / 2, 1.9))
+    shapes += label_shapes(scene, fluid, (1.0 + label_width(scene.told(fluid)) / 2, 5.6))
     return Symbol(shapes=tuple(shapes), body=Box(0, 0, width, _DEEP))

@@ -11,6 +11,7 @@ from provenzero.network.model import LineId
 
 _TURN = 3.2
 _APART = 0.8
+_INDENT = 1.4
 _OFF_DOT = 1.0
 
 
@@ -71,6 +72,7 @@ class Row:
                 stretch.free.append((clear, right - _OFF_DOT, number - 1))
                 stretch.points += [(right, y + above.offset), (right, turn), (x, turn), (x, base)]
                 clear = x + _OFF_DOT
+                here = x + _INDENT
             for cell in level.cells:
                 at = here + cell.left
                 stretch.free.append((clear, at + (cell.clear if cell.body is not None else -_OFF_DOT), number))

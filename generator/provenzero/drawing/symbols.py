@@ -32,6 +32,7 @@ TANK_TOP = 1.4
 BOTTLE_HALF = 2.25
 BOTTLE_HEIGHT = 9.0
 CYLINDER_LONG = 10.4
+RING_RADIUS = 1.9
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -221,15 +222,15 @@ def gas_valve(venting: bool) -> Symbol:
 @cache
 def tank() -> Symbol:
     """The reservoir, open at the top, entered from above."""
-    shapes = (stroke((-1.7, -0.7), (-1.7, 1.0), (1.7, 1.0), (1.7, -0.7)), stroke((0, -TANK_TOP), (0, 0.4)))
-    return Symbol(shapes=shapes, body=Box(-1.9, -TANK_TOP, 1.9, 1.2))
+    shapes = (stroke((-1.4, -0.7), (-1.4, 1.0), (1.4, 1.0), (1.4, -0.7)), stroke((0, -TANK_TOP), (0, 0.4)))
+    return Symbol(shapes=shapes, body=Box(-1.4, -TANK_TOP, 1.4, 1.1))
 
 
 @cache
 def outlet_to_air() -> Symbol:
     """An outlet to the atmosphere, entered from above."""
     shapes = (stroke((0, -TANK_TOP), (0, -0.6)), area((-1.3, -0.6), (1.3, -0.6), (0, 1.1)))
-    return Symbol(shapes=shapes, body=Box(-1.9, -TANK_TOP, 1.9, 1.2))
+    return Symbol(shapes=shapes, body=Box(-1.4, -TANK_TOP, 1.4, 1.1))
 
 
 @cache
@@ -242,8 +243,8 @@ def breather() -> Symbol:
 @cache
 def ring(letter: str) -> Symbol:
     """A letter in a ring: the line goes on where the same letter stands."""
-    shapes = (Circle(centre=(0, 0), radius=1.9, pen=Pen.SYMBOL, fill=Fill.PAPER), words((0, 0.88), letter, size_mm=2.4))
-    return Symbol(shapes=shapes, body=Box(-1.9, -1.9, 1.9, 1.9))
+    shapes = (Circle(centre=(0, 0), radius=RING_RADIUS, pen=Pen.SYMBOL, fill=Fill.PAPER), words((0, 0.88), letter, size_mm=2.4))
+    return Symbol(shapes=shapes, body=Box(-RING_RADIUS, -RING_RADIUS, RING_RADIUS, RING_RADIUS))
 
 
 @cache

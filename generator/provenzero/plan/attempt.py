@@ -40,18 +40,42 @@ class Attempt:
         return (self.loss.key(), len(self.unheld), len(self.locks), len(self.made))
 
 
-def search(wiring: Wiring, state: State, zone: Iterable[LineId]) -> Attempt:
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Worked:
+    """What of a function is worked on: chambers whose vents locks should hold, pilots that should be dead."""
+
+    chambers: frozenset[LineId] = frozenset()
+    pilots: frozenset[LineId] = frozenset()
+
+
+def search(wiring: Wiring, state: State, zone: Iterable[LineId], worked: Worked | None = None) -> Attempt:
     """The best isolation found: least impairment, then fewest locks. If none works, the one that came nearest.
 
-    First with trapped liquid beside the region taken in; where that never works, with locks between.
+    First with the pilots of what is worked on dead and trapped liquid beside the region taken in; where that never
+    works, with locks between, and then without the pilots.
     """
-    seed = frozenset(zone)
-    found = _search(wiring, state, seed, take_in=True)
-    if found.obstacles:
-        other = _search(wiring, state, seed, take_in=False)
-        if not other.obstacles:
-            return other
+    opened = frozenset(zone)
+    worked = worked or Worked()
+    found = None
+    for pilots in dict.fromkeys((worked.pilots, frozenset[LineId]())):
+        for take_in in (True, False):
+            aim = _Aim(zone=opened, seed=opened | pilots, hold=worked.chambers)
+            attempt = _search(wiring, state, aim, take_in=take_in)
+            if not attempt.obstacles:
+                return attempt
+            found = found or attempt
+    if found is None:
+        raise AssertionError("a search always makes at least one attempt")
     return found
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class _Aim:
+    """The lines that are opened, those that must be dead to begin with, and those whose vent locks should hold."""
+
+    zone: frozenset[LineId]
+    seed: frozenset[LineId]
+    hold: frozenset[LineId]
 
 
 def _explained(first: Attempt, nearest: Attempt, blocked: list[Obstacle]) -> Attempt:
@@ -61,13 +85,13 @@ def _explained(first: Attempt, nearest: Attempt, blocked: list[Obstacle]) -> Att
     return replace(nearest, obstacles=tuple(dict.fromkeys(root)))
 
 
-def _search(wiring: Wiring, state: State, seed: frozenset[LineId], *, take_in: bool) -> Attempt:
+def _search(wiring: Wiring, state: State, aim: _Aim, *, take_in: bool) -> Attempt:
     """Try regions in the order of what they cost; once one works, only others that cost no more impairment."""
     best: Attempt | None = None
     made: list[Attempt] = []
     blocked: list[Obstacle] = []
-    queue: list[tuple[tuple[int, ...], int, frozenset[LineId]]] = [((0,), 0, seed)]
-    seen: set[frozenset[LineId]] = {seed}
+    queue: list[tuple[tuple[int, ...], int, frozenset[LineId]]] = [((0,), 0, aim.seed)]
+    seen: set[frozenset[LineId]] = {aim.seed}
     tried = 0
     while queue and tried < (_MOST_REGIONS if best is None else _MOST_AFTER):
         rank, _, lines = heapq.heappop(queue)
@@ -75,7 +99,7 @@ def _search(wiring: Wiring, state: State, seed: frozenset[LineId], *, take_in: b
             break
         tried += 1
         region = enclose(wiring, state, lines, take_in=take_in)
-        attempt = isolate(wiring, state, seed, region)
+        attempt = isolate(wiring, state, aim, region)
         if not attempt.obstacles and (best is None or attempt.score() < best.score()):
             best = attempt
         made.append(attempt)
@@ -139,9 +163,11 @@ def _beyond(wiring: Wiring, region: Region) -> list[frozenset[LineId]]:
     ]
 
 
-def isolate(wiring: Wiring, state: State, zone: frozenset[LineId], region: Region) -> Attempt:
+def isolate(wiring: Wiring, state: State, aim: _Aim, region: Region) -> Attempt:
     """Lock the region's edge, let it out, and keep only the locks that are needed."""
+    zone = aim.zone
     targets = _targets(wiring, state, zone, region)
+    targets += [k for k in wiring.network.lines if k in aim.hold and k not in targets]
     holding = hold_open(wiring, state, region.outside.lines, region.barriers, targets)
     weak = _weak(wiring, state, zone, region, holding.locked)
     if weak - set(targets):

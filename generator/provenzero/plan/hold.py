@@ -160,7 +160,7 @@ def _exits(
                 yield position, item.target
 
 
-def _price(
+def _price(  # noqa: PLR0913 - a device in a position, and all that makes it dear
     device: Device,
     position: str,
     state: State,

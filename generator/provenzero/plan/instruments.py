@@ -5,15 +5,18 @@ from collections.abc import Iterable
 from provenzero.network.model import Gauge, LineId, PassageKind
 from provenzero.plan.model import Expect
 from provenzero.state.model import State, Wiring
+from provenzero.unit.model import ATMOSPHERE, RESERVOIR, RETURNS
+
+TANKS = frozenset(LineId(name) for name in (RESERVOIR, RETURNS, ATMOSPHERE))
 
 
 def joined_lines(wiring: Wiring, state: State, line: LineId) -> set[LineId]:
-    """Lines that share the pressure of a line through sure open passages, not reaching through a vent."""
+    """Lines that share the pressure of a line through sure open passages, not reaching through a vent or a tank."""
     seen = {line}
     stack = [line]
     while stack:
         here = stack.pop()
-        if here in wiring.vents:
+        if here in wiring.vents or here in TANKS:
             continue
         for tag in wiring.touching[here]:
             for item in wiring.device(tag).positions[state.positions[tag]]:
@@ -28,7 +31,7 @@ def joined_lines(wiring: Wiring, state: State, line: LineId) -> set[LineId]:
 
 def gauges_of(wiring: Wiring, state: State, line: LineId) -> list[Gauge]:
     """Gauges that show the pressure of a line as the devices stand now, in the order of the description."""
-    lines = joined_lines(wiring, state, line) - wiring.vents
+    lines = joined_lines(wiring, state, line) - wiring.vents - TANKS
     return [g for g in wiring.network.gauges if g.readable and g.reads in lines]
 
 

@@ -3,15 +3,16 @@
 from collections.abc import Mapping
 from dataclasses import dataclass, replace
 
-from provenzero.catalogue.job import Job, Leave, TestKind
+from provenzero.catalogue.job import Equipment, Job, Leave, TestKind
 from provenzero.failure.grade import grades
 from provenzero.network.compile import vents_for
 from provenzero.network.devices.pumps import LIQUID
 from provenzero.network.model import Actuator, DeviceKind, DeviceTag, LineId, Medium, Network
-from provenzero.plan.attempt import Attempt, search
+from provenzero.plan.attempt import Attempt, Worked, search
 from provenzero.plan.impairment import impairment
-from provenzero.plan.instruments import gauges_of, joined_lines, readings
+from provenzero.plan.instruments import TANKS, gauges_of, joined_lines, readings
 from provenzero.plan.model import Lock, Obstacle, Plan, Purpose, Refusal, Section, StepKind
+from provenzero.plan.region import unheld_movers
 from provenzero.plan.reinstate import restore_all
 from provenzero.plan.steps import Script, reason_of
 from provenzero.state.action import initial
@@ -59,7 +60,7 @@ def make_plan(
     start = script.state
     _prepare_texts(script, job)
     _leave(script, job, on)
-    attempt = search(wiring, script.state, zone)
+    attempt = search(wiring, script.state, zone, _worked_on(wiring, job, zone))
     if attempt.obstacles:
         return Refusal(unit=unit, job=job, on=on, zone=zone, obstacles=attempt.obstacles)
     making = _Making(unit=unit, job=job, on=on, wiring=wiring, zone=zone, attempt=attempt, script=script)
@@ -108,6 +109,21 @@ def _prepare_texts(script: Script, job: Job) -> None:
         script.say(Section.PREPARE, StepKind.JOB_TEXT, facts={"text": text}, reason="job")
 
 
+def _worked_on(wiring: Wiring, job: Job, zone: tuple[LineId, ...]) -> Worked:
+    """Chambers of a function that is worked on, and the pilots that could move its handle.
+
+    The vents of these chambers are held by locks and its remote commands are dead, so that nobody's hand at a panel
+    reaches the piston, even while there is nothing to move it with.
+    """
+    if job.equipment is not Equipment.FUNCTION:
+        return Worked()
+    items = [a for a in wiring.network.actuators if a.open_line in zone or a.close_line in zone]
+    return Worked(
+        chambers=frozenset(k for a in items for k in (a.open_line, a.close_line)),
+        pilots=frozenset(line for a in items for line in unheld_movers(wiring.device(a.valve))),
+    )
+
+
 def _leave(script: Script, job: Job, on: str) -> None:
     """Put the function at the end where the job wants its piston."""
     if job.leave is Leave.AS_FOUND:
@@ -141,7 +157,7 @@ def _isolate(making: _Making) -> dict[DeviceTag, Purpose]:
 def _verify(making: _Making) -> None:
     script, wiring = making.script, making.wiring
     names = [a.name for a in making.functions()]
-    commanded = [f for f in making.unit.functions if f.name in names]
+    commanded = [f for f in making.unit.functions if f.name in names and _commands_dead(making, DeviceTag(f.valve.tag))]
     for panel in making.unit.panels:
         tried = [f.name for f in commanded if panel.tag in f.valve.panels]
         if tried:
@@ -172,10 +188,23 @@ def _verify(making: _Making) -> None:
     script.say(Section.VERIFY, StepKind.RELEASE_WORK, hold_point=True, reason="release_work")
 
 
+def _commands_dead(making: _Making, valve: DeviceTag) -> bool:
+    """Whether no remote command can move a valve: a handle that a panel could throw is not tried."""
+    locks = making.attempt.locks
+    flood = reach(making.wiring, locks, making.script.state.pressures)
+    device = making.wiring.device(valve)
+    holds = device.lock_holds_against if valve in locks else ()
+    return not any(mover in flood.lines for mover in device.moved_by if mover not in holds)
+
+
 def _groups(making: _Making) -> list[tuple[LineId, ...]]:
     """Zone lines that hold pressure media, those that share one pressure together."""
     wiring, state = making.wiring, making.script.state
-    left = [k for k in making.zone if wiring.network.lines[k].medium is not Medium.ELECTRIC and k not in wiring.vents]
+    left = [
+        k
+        for k in making.zone
+        if wiring.network.lines[k].medium is not Medium.ELECTRIC and k not in wiring.vents | TANKS
+    ]
     groups = []
     while left:
         same = joined_lines(wiring, state, left[0])

@@ -153,10 +153,7 @@ class Node:
 
 def unit_of(reader: Reader) -> Unit | None:
     """The unit of a description that fits the schema; None if values in it cannot be read (see `reader.errors`)."""
-    data = reader.document.data
-    if not isinstance(data, Mapping):
-        return None
-    top = Node(reader, data, ())
+    top = Node(reader, reader.document.data, ())
     fluid, about = top.at("fluid"), top.at("description")
     unit = Unit(
         identity=_identity(top.at("unit")),
@@ -187,7 +184,9 @@ def _identity(node: Node) -> Identity:
         tag=node.text("tag"),
         name=node.text("name"),
         site=node.text("site"),
-        jurisdiction=Jurisdiction(node.text("jurisdiction", UNKNOWN)),
+        jurisdiction=Jurisdiction(
+            node.word("jurisdiction", UNKNOWN, "the permit is benchmarked against 29 CFR 1910.147")
+        ),
         rated_pressure_pag=node.quantity("rated_pressure", Dimension.PRESSURE),
         drawing=node.text("drawing"),
         manual=node.text("manual"),
@@ -257,7 +256,9 @@ def _element(node: Node) -> Element:
         case "strainer":
             return Strainer(tag=tag, location=location)
         case "reducer":
-            return Reducer(tag=tag, location=location, set_pressure_pag=node.quantity("set_pressure", Dimension.PRESSURE))
+            return Reducer(
+                tag=tag, location=location, set_pressure_pag=node.quantity("set_pressure", Dimension.PRESSURE)
+            )
         case _:
             return _fitting(node)
 
@@ -331,7 +332,9 @@ def _pump(node: Node) -> Pump:
         energy=None if energy is None else _valve(energy) if drive is Drive.AIR else _isolator(energy),
         flow_m3_s=node.maybe("flow", Dimension.FLOW, "no charging time is printed"),
         automatic=node.yes("automatic", "it is taken to start by itself", unknown=True),
-        start_pressure_pag=node.maybe("start_pressure", Dimension.PRESSURE, "it is taken to start at its stop pressure"),
+        start_pressure_pag=node.maybe(
+            "start_pressure", Dimension.PRESSURE, "it is taken to start at its stop pressure"
+        ),
         stop_pressure_pag=node.quantity("stop_pressure", Dimension.PRESSURE),
         suction=_run(node, "suction"),
         discharge=_run(node, "discharge"),
@@ -431,8 +434,7 @@ def _panel(node: Node) -> Panel:
         kind=kind,
         supply=node.text("supply", "panel supply"),
         energy=None if energy is None else _valve(energy) if kind is PanelKind.PNEUMATIC else _isolator(energy),
-        through_pilot_air=kind is PanelKind.ELECTRIC
-        and node.text("through_pilot_air", "no") == "yes",
+        through_pilot_air=kind is PanelKind.ELECTRIC and node.text("through_pilot_air", "no") == "yes",
         pilot_air=None if pilot is None else _valve(pilot),
     )
 

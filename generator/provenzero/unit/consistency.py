@@ -114,36 +114,41 @@ def _unknown(path: Path, word: str, known: Iterable[str], what: str) -> _Fault:
 
 
 def _references(unit: Unit) -> Iterator[_Fault]:
+    """Every line, panel and regulator that is named must be one of the description."""
     lines = _lines(unit)
-    panels = [p.tag for p in unit.panels]
     chambers = [f"{f.name}.{side}" for f in unit.functions for side in ("open", "close")]
-    for i, item in enumerate(unit.functions):
-        if item.fed_from not in lines:
-            yield _unknown(("functions", i, "fed_from"), item.fed_from, lines, "pressure line")
-        for k, tag in enumerate(item.valve.panels):
-            if tag not in panels:
-                yield _unknown(("functions", i, "valve", "panels", k), tag, panels, "panel")
+    for path, line in _named_lines(unit):
+        if line not in lines:
+            yield _unknown(path, line, lines, "pressure line")
     for i, bank in enumerate(unit.banks):
         if bank.attached_to not in [*lines, *chambers]:
             yield _unknown(("banks", i, "attached_to"), bank.attached_to, [*lines, *chambers], "line")
-    for i, pump in enumerate(unit.pumps):
-        if pump.delivers_to not in lines:
-            yield _unknown(("pumps", i, "delivers_to"), pump.delivers_to, lines, "pressure line")
-    for i, regulator in enumerate(unit.regulators):
-        if regulator.fed_from not in lines:
-            yield _unknown(("regulators", i, "fed_from"), regulator.fed_from, lines, "pressure line")
+    panels = [p.tag for p in unit.panels]
+    for i, item in enumerate(unit.functions):
+        for k, tag in enumerate(item.valve.panels):
+            if tag not in panels:
+                yield _unknown(("functions", i, "valve", "panels", k), tag, panels, "panel")
     regulators = [r.tag for r in unit.regulators]
     for i, bypass in enumerate(unit.bypasses):
         if bypass.around not in regulators:
             yield _unknown(("bypasses", i, "around"), bypass.around, regulators, "regulator")
-        for key, line in (("from", bypass.from_line), ("to", bypass.to_line)):
-            if line not in lines:
-                yield _unknown(("bypasses", i, key), line, lines, "pressure line")
         if bypass.from_line == bypass.to_line:
             yield _error(("bypasses", i, "to"), f"a bypass from {bypass.to_line} to itself", "two different lines")
+
+
+def _named_lines(unit: Unit) -> Iterator[tuple[Path, str]]:
+    """Where the description names a pressure line, and the name."""
+    for i, item in enumerate(unit.functions):
+        yield ("functions", i, "fed_from"), item.fed_from
+    for i, pump in enumerate(unit.pumps):
+        yield ("pumps", i, "delivers_to"), pump.delivers_to
+    for i, regulator in enumerate(unit.regulators):
+        yield ("regulators", i, "fed_from"), regulator.fed_from
+    for i, bypass in enumerate(unit.bypasses):
+        yield ("bypasses", i, "from"), bypass.from_line
+        yield ("bypasses", i, "to"), bypass.to_line
     for i, backup in enumerate(unit.nitrogen_backups):
-        if backup.delivers_to not in lines:
-            yield _unknown(("nitrogen_backup", i, "delivers_to"), backup.delivers_to, lines, "pressure line")
+        yield ("nitrogen_backup", i, "delivers_to"), backup.delivers_to
 
 
 def _rings(unit: Unit) -> Iterator[_Fault]:
@@ -170,7 +175,7 @@ def _pressures(unit: Unit) -> Iterator[_Fault]:
     for i, item in enumerate(unit.regulators):
         if item.set_pressure_pag > rated:
             yield _error(
-                ("regulators", i, "set_pressure"), f"{_psi(item.set_pressure_pag)}", f"at most {_psi(rated)}, the rating"
+                ("regulators", i, "set_pressure"), _psi(item.set_pressure_pag), f"at most {_psi(rated)}, the rating"
             )
     for path, part in _walk(unit):
         opens = part.set_pressure_pag if isinstance(part, Relief) else None
@@ -277,6 +282,4 @@ def _media(unit: Unit) -> Iterator[_Fault]:
 def _returns(unit: Unit) -> Iterator[_Fault]:
     for path, part in _walk(unit):
         if isinstance(part, (Bleed, Relief)) and part.to == RETURNS and not unit.common_returns:
-            yield _error(
-                (*path, "to"), "returns, on a unit without a common return header", "reservoir or atmosphere"
-            )
+            yield _error((*path, "to"), "returns, on a unit without a common return header", "reservoir or atmosphere")

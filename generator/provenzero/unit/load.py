@@ -7,7 +7,8 @@ from typing import Any
 
 from provenzero.finding import Finding, Place, has_errors, in_order
 from provenzero.quantity import QuantityError
-from provenzero.reading.lines import Document, load as load_lines, load_text
+from provenzero.reading.lines import Document, load_text
+from provenzero.reading.lines import load as load_lines
 from provenzero.reading.schema import check
 from provenzero.unit.build import Reader, unit_of
 from provenzero.unit.consistency import faults

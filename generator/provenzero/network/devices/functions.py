@@ -10,6 +10,7 @@ from provenzero.network.model import (
     DeviceKind,
     DeviceTag,
     LineId,
+    Medium,
     Passage,
     PassageKind,
 )
@@ -64,6 +65,9 @@ def function(builder: Builder, item: Function, panels: tuple[Panel, ...], *, com
     for element in item.close_fittings:
         fitting(builder, element, close_line)
     pilots = movers(builder, item.name, valve, panels)
+    for line in pilots[1:]:
+        if builder.lines[LineId(line)].medium is Medium.AIR:
+            builder.port(valve.tag, "pilot", LineId(line))
     holds = () if not valve.lockable else pilots if valve.lock_holds_against_pilot else (HAND,)
     builder.device(
         Device(
