@@ -3,7 +3,7 @@
 from typing import Any
 
 import pytest
-from hypothesis import HealthCheck, given, settings
+from hypothesis import HealthCheck, Phase, given, settings
 from tests.properties.oracle import check_all
 from tests.properties.planning import example, network_of, places, unit_from, written
 from tests.properties.strategies import unit_data
@@ -13,6 +13,9 @@ from provenzero.plan.make import make_plan
 from provenzero.plan.model import Plan
 from provenzero.proof.prove import prove
 
+# A whole unit takes minutes to shrink; the first failing one is shown as it is.
+PHASES = (Phase.explicit, Phase.reuse, Phase.generate)
+SLOW = (HealthCheck.too_slow, HealthCheck.data_too_large)
 UNITS = ("land-rig", "jack-up", "workover")
 
 
@@ -32,7 +35,7 @@ def test_every_job_on_an_example_unit_has_a_plan_that_keeps_all_properties(name:
     assert count > 8
 
 
-@settings(max_examples=60, suppress_health_check=[HealthCheck.too_slow, HealthCheck.data_too_large])
+@settings(max_examples=60, phases=PHASES, suppress_health_check=SLOW)
 @given(unit_data())
 def test_every_plan_made_for_a_generated_unit_keeps_all_properties(data: dict[str, Any]) -> None:
     unit = unit_from(data)
@@ -45,7 +48,7 @@ def test_every_plan_made_for_a_generated_unit_keeps_all_properties(data: dict[st
             assert plan.obstacles, (job.id, on)
 
 
-@settings(max_examples=20, suppress_health_check=[HealthCheck.too_slow, HealthCheck.data_too_large])
+@settings(max_examples=20, phases=PHASES, suppress_health_check=SLOW)
 @given(unit_data(most_functions=3, most_banks=2, most_pumps=2))
 def test_the_same_input_gives_the_same_plan_file(data: dict[str, Any]) -> None:
     unit = unit_from(data)

@@ -14,6 +14,7 @@ from provenzero.drawing.alternative import alternative, title
 from provenzero.drawing.banks import bank_block, header_block
 from provenzero.drawing.block import Block, in_nooks, in_pairs, shelves
 from provenzero.drawing.canvas import Canvas
+from provenzero.drawing.function_plan import Limits
 from provenzero.drawing.functions import function_block
 from provenzero.drawing.legend import legend_block
 from provenzero.drawing.marks import Marks
@@ -109,9 +110,9 @@ def _right(scene: Scene, limit: float, silent: frozenset[LineId]) -> list[Block]
         left = [link for link in left if link not in around]
         blocks.append(regulator_block(scene, item, around, limit, silent))
     blocks += [bypass_block(scene, link, limit, silent) for link in left]
-    functions = [function_block(scene, item, limit, 0.0, silent) for item in scene.unit.functions]
-    column = _column([*blocks, *functions])
-    return blocks + [function_block(scene, item, limit, column, silent) for item in scene.unit.functions]
+    first = [function_block(scene, f, Limits(width=limit, column=0.0, silent=silent)) for f in scene.unit.functions]
+    limits = Limits(width=limit, column=_column([*blocks, *first]), silent=silent)
+    return blocks + [function_block(scene, item, limits) for item in scene.unit.functions]
 
 
 def _left(scene: Scene, limit: float, silent: frozenset[LineId]) -> list[Block]:

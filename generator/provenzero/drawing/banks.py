@@ -114,7 +114,8 @@ def _bottles_cell(scene: Scene, item: Bank, group: _Bottles, fluid: LineId) -> C
     valves = [item.bottle_valves[number - 1].tag for number in numbers] if item.bottle_valves else []
     words = _words(item, group)
     valve_words = tag(valves[0] if len(valves) == 1 else f"{valves[0]}..{valves[-1]}") if valves else Tag(())
-    foot = _STEM + (_VALVE_TALL + 1.0 if valves else 0.0)
+    stem = _STEM + (BOX_MARGIN + 0.2 if group.lock is not None else 0.0)
+    foot = stem + (_VALVE_TALL + 1.0 + (BOX_MARGIN if group.lock is not None else 0.0) if valves else 0.0)
     top = foot + BOTTLE_HEIGHT + _NUB + 2.2
     margin = BOX_MARGIN if group.gas_lock is not None else 0.0
     shut_locked = group.lock is not None
@@ -124,11 +125,11 @@ def _bottles_cell(scene: Scene, item: Bank, group: _Bottles, fluid: LineId) -> C
     def paint(canvas: Canvas, x: float, y: float) -> None:
         canvas.dot(fluid, (x, y))
         if valves:
-            canvas.wire(fluid, (x, y), (x, y - _STEM))
+            canvas.wire(fluid, (x, y), (x, y - stem))
             body = canvas.symbol(
-                upright_shut_off(group.position == "open"), (x, y - _STEM - _VALVE_TALL / 2), *valves, boxed=shut_locked
+                upright_shut_off(group.position == "open"), (x, y - stem - _VALVE_TALL / 2), *valves, boxed=shut_locked
             )
-            canvas.wire(side, (x, y - _STEM - _VALVE_TALL), (x, y - foot))
+            canvas.wire(side, (x, y - stem - _VALVE_TALL), (x, y - foot))
             canvas.alike(side, [LineId(f"{key}.fluid") for key in keys[1:]])
             _beside_valve(canvas, group, valve_words, body, valves)
         else:

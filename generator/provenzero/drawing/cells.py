@@ -210,6 +210,8 @@ def _branch(scene: Scene, parts: list[Part], line: LineId, to: LineId | None, *,
         places.append(places[-1] + apart)
     beside = outlet_half(to)
     out = places[-1] + parts[-1].body.right + beside + (0.2 if to in (RESERVOIR, ATMOSPHERE) else 1.0)
+    if below and to is not None:
+        out = max(out, places[-1] + parts[-1].right + beside + ROOM)
     where = scene.vent(parts[0].name)
     stub = scene.ends(parts[0].name)[1] if to is None else None
     told = scene.told(stub) if stub is not None else ""

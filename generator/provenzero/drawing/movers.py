@@ -111,7 +111,9 @@ def _isolated(scene: Scene, item: Function, panels: list[Panel]) -> Movers:
     part = part_of(scene, valve.tag, _gathered(scene, valve.tag, half, exhausts=valve.exhausts))
     told = scene.told(own)
     middle = max(SIDE / 2, half)
-    reach = _CELL + max(LEAD + (label_width(told) if told else 0.0) - part.body.left, part.left + ROOM - _CELL)
+    near = part.left if part.words.lock is not None else -part.body.left
+    word = label_width(told) if told else 0.0
+    reach = _CELL + max(LEAD + word + near, part.left + ROOM - _CELL)
     faces = reach + max(part.symbol.body.right + _STUB, part.right + ROOM)
     wide = max(_wide(scene, panel, _pilot(item, panel)) for panel in panels)
 
@@ -119,7 +121,7 @@ def _isolated(scene: Scene, item: Function, panels: list[Panel]) -> Movers:
         canvas.symbol(pilot_cell(SIDE), (x, y))
         level = y + middle
         canvas.wire(own, (x + _CELL, level), (x + reach + part.symbol.body.left, level))
-        label(canvas, scene, own, (x + _CELL + (reach + part.body.left - _CELL) / 2, level))
+        label(canvas, scene, own, (x + _CELL + LEAD / 2 + word / 2, level))
         part.paint(canvas, (x + reach, level), below=True)
         for place, panel in enumerate(panels):
             height = level + (place - (len(panels) - 1) / 2) * PITCH

@@ -28,7 +28,7 @@ def reservoir_block(scene: Scene, item: Reservoir, width: float, silent: frozens
     drain = _drain(scene, item, silent)
     beside = max(limb, drain.width + LEAD + 4.6 if drain is not None else 0.0)
     right = max(width - beside, _LEFT + 22.0 + width_mm(item.tag, TAG_MM, bold=True))
-    limb_at = _LIMB if drain is None else min(_LIMB, _OUTLET - drain.up - 1.2)
+    limb_at = _LIMB if drain is None else min(_LIMB, _OUTLET - drain.up - (2.2 if scene.told(returns) else 1.3))
     tank = _tank(scene, item, right - _LEFT)
 
     def draw(canvas: Canvas, x: float, y: float, end: float) -> None:

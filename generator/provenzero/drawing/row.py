@@ -49,7 +49,7 @@ class Row:
         self._begin = roomy[0].left if from_first and roomy else 0.0
         self._levels = _spread(roomy, limit_mm)
         self.ends = _ends(roomy)
-        self.width = max(_width(level.cells) for level in self._levels)
+        self.width = max(_width(level.cells) + (_INDENT if n else 0.0) for n, level in enumerate(self._levels))
         if len(self._levels) > 1:
             self.width += _TURN
         self.last = cells[-1].line_out if cells else first

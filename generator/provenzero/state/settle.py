@@ -210,6 +210,8 @@ def _pass_on(groups: list[_Group], edge: _Edge) -> bool:
             down.stiff = down.stiff or up.high > 0.0
         elif up.low < down.low and not down.stiff:
             down.low = up.low
+        if down.high > up.high and not (up.vent or up.drained or up.gas or up.live):
+            up.high = down.high  # what is trapped beyond could leak back
     return old != (up.low, up.high, down.low, down.high, down.stiff)
 
 

@@ -101,10 +101,11 @@ def texts_overlap(drawing: Drawing) -> Iterator[str]:
     pieces = [(g, band(s, e, g)) for g in drawing.groups if g.kind is Kind.LINE for s, e in segments(g)]
     for group, text, box in words:
         for symbol, body in outlines:
-            if symbol is not group and overlap(box, body) and not lozenge_corner(symbol, box):
+            own = symbol is group or (group.kind is Kind.MARK and symbol.names == group.names)
+            if not own and overlap(box, body) and not lozenge_corner(symbol, box):
                 yield f"words {text.words} of {group.names} lie on {symbol.kind} {symbol.names}"
         for line, piece in pieces:
-            if group.kind is not Kind.LABEL and overlap(box, piece):
+            if group.kind not in (Kind.LABEL, Kind.SYMBOL) and overlap(box, piece):
                 yield f"words {text.words} of {group.names} lie on line {line.names}"
     for (one, a), (other, b) in combinations([o for o in outlines if o[0].kind is not Kind.SYMBOL], 2):
         if overlap(a, b) and not (lozenge_corner(one, b) or lozenge_corner(other, a)):
