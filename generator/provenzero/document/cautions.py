@@ -8,6 +8,9 @@ from provenzero.document.brief import Brief
 from provenzero.document.model import Block, Bullets, Notice, Signal, Words
 from provenzero.document.register import test_gauges
 from provenzero.network.model import LineId, Medium
+from provenzero.plan.instruments import joined_lines
+from provenzero.state.model import wire
+from provenzero.unit.model import RETURNS
 
 
 def cautions(brief: Brief) -> tuple[Block, ...]:
@@ -26,6 +29,8 @@ def cautions(brief: Brief) -> tuple[Block, ...]:
     panels.append(_caution(brief, Signal.WARNING, "first_turn"))
     if brief.plan.unit.bypasses:
         panels.append(_caution(brief, Signal.WARNING, "bypass"))
+    if _joined_to_returns(brief):
+        panels.append(_caution(brief, Signal.CAUTION, "returns"))
     head = max((brief.head_pag(k) for k in brief.plan.zone), default=0.0)
     if head > 0.0:
         panels.append(_caution(brief, Signal.CAUTION, "head", pressure=brief.measure.pressure(head)))
@@ -62,6 +67,15 @@ def _caution(brief: Brief, signal: Signal, key: str, **facts: str) -> Notice:
         title=brief.say(f"cautions.{key}_title"),
         lines=brief.wording.points(f"cautions.{key}", **facts),
     )
+
+
+def _joined_to_returns(brief: Brief) -> bool:
+    """Whether an opened line stands open to a return header that other functions use too."""
+    plan = brief.plan
+    if not plan.unit.common_returns:
+        return False
+    wiring, state = wire(plan.network), plan.isolated()
+    return any(LineId(RETURNS) in joined_lines(wiring, state, line) for line in plan.zone)
 
 
 def _nitrogen(brief: Brief) -> list[LineId]:

@@ -24,6 +24,7 @@ TANK_AT = VALVE_BOTTOM + 2.2
 CYLINDER = CYLINDER_LONG + 2.6
 CYLINDER_PORTS = (1.2, 9.0)
 NAME_PITCH = 2.7
+SURGE_GAP = 1.2
 _UNDER_VALVE = 2.1
 _RUNS_APART = 2.4
 _BESIDE_CYLINDER = 3.4
@@ -128,12 +129,15 @@ def _measure(scene: Scene, item: Function, limits: Limits, *, under: bool) -> Fu
         row_at = returns + row.up + _BAND
     where = scene.vent(item.valve.tag)
     at = max(mover + end.width, beside) + _BAND
+    if word_at and item.close_fittings:
+        at = max(at, port + label_width(scene.told(tank)) + ROOM)
     if where is not None and item.close_fittings:
         at = max(at, beside + 1.6 + vent_width(scene, where) + ROOM)
     above, _ = _side_by_side(fittings(scene, item.open_fittings, open_line), at)
     below, at = _side_by_side(fittings(scene, item.close_fittings, close_line, below=True), at)
     vent = (beside + 1.6, max(VALVE_TOP + max(SIDE + margin, end.down), tank_bottom if word_at else 0.0) + 0.6)
-    things = [_Thing(mover + right, 0.0, VALVE_TOP + down) for right, down in end.profile]
+    things = [_Thing(mover, 0.0, VALVE_BOTTOM + margin)]
+    things += [_Thing(mover + right, 0.0, VALVE_TOP + down) for right, down in end.profile]
     things += [_Thing(place + cell.right, 0.0, CLOSE_RUN + cell.down) for cell, place in below]
     things.append(_Thing(beside + _BAND, 0.0, max(returns, row_at + row.down) if under else tank_bottom))
     if word_at:
@@ -179,7 +183,7 @@ def _surge(
     for bank in scene.unit.banks:
         if bank.attached_to in (f"{item.name}.open", f"{item.name}.close"):
             block = bank_block(scene, bank, 80.0, silent)
-            drop = max(at + 1.0, block.width + 1.0)
+            drop = max(at + 1.0, block.width + SURGE_GAP)
             placed.append((block, drop, floor + block.up + 1.0))
             floor += block.height + 1.0
             at = drop + _BAND

@@ -8,6 +8,7 @@ from provenzero.drawing.function_plan import (
     CLOSE_RUN,
     CYLINDER_PORTS,
     NAME_PITCH,
+    SURGE_GAP,
     TANK_AT,
     VALVE_BOTTOM,
     VALVE_TOP,
@@ -104,7 +105,7 @@ def _draw_lines(canvas: Canvas, scene: Scene, item: Function, plan: FunctionPlan
             if tap.line == line:
                 canvas.dot(line, (x + drop, y + run))
                 canvas.wire(line, (x + drop, y + run), (x + drop, y + level + tap.offset))
-                block.draw(canvas, x + drop - block.width - 0.5, y + level, x + drop)
+                block.draw(canvas, x + drop - block.width - SURGE_GAP, y + level, x + drop)
 
 
 def _draw_cylinder(canvas: Canvas, scene: Scene, item: Function, plan: FunctionPlan, corner: Point) -> None:

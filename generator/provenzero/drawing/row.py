@@ -47,7 +47,7 @@ class Row:
         self._silent = silent
         roomy = self._with_room(cells, run_out, -cells[0].left if from_first and cells else 0.0)
         self._begin = roomy[0].left if from_first and roomy else 0.0
-        self._levels = _spread(roomy, limit_mm)
+        self._levels = self._spread(roomy, limit_mm)
         self.ends = _ends(roomy)
         self.width = max(_width(level.cells) + (_INDENT if n else 0.0) for n, level in enumerate(self._levels))
         if len(self._levels) > 1:
@@ -123,20 +123,28 @@ class Row:
                 found[-1] = replace(found[-1], right=found[-1].right + short)
         return found
 
+    def _spread(self, cells: list[Cell], limit_mm: float) -> list[_Level]:
+        groups: list[list[Cell]] = [[]]
+        for cell in cells:
+            if groups[-1] and _width(groups[-1]) + cell.left + cell.right > limit_mm:
+                groups.append([self._led_in(cell)])
+            else:
+                groups[-1].append(cell)
+        levels: list[_Level] = []
+        for group in groups:
+            offset = 0.0
+            if levels:
+                offset = levels[-1].offset + levels[-1].down + _TURN + max(cell.up for cell in group)
+            levels.append(_Level(group, offset, max((cell.down for cell in group), default=0.5)))
+        return levels
 
-def _spread(cells: list[Cell], limit_mm: float) -> list[_Level]:
-    groups: list[list[Cell]] = [[]]
-    for cell in cells:
-        if groups[-1] and _width(groups[-1]) + cell.left + cell.right > limit_mm:
-            groups.append([])
-        groups[-1].append(cell)
-    levels: list[_Level] = []
-    for group in groups:
-        offset = 0.0
-        if levels:
-            offset = levels[-1].offset + levels[-1].down + _TURN + max(cell.up for cell in group)
-        levels.append(_Level(group, offset, max((cell.down for cell in group), default=0.5)))
-    return levels
+    def _led_in(self, cell: Cell) -> Cell:
+        """The first cell of a further level, with room before it for the word on the line that comes down to it."""
+        words = self._scene.told(cell.line_in)
+        if not words or cell.line_in in self._silent:
+            return cell
+        clear = cell.clear if cell.body is not None else -_OFF_DOT
+        return replace(cell, left=max(cell.left, label_width(words) + _APART + _OFF_DOT - _INDENT - clear))
 
 
 def _ends(cells: list[Cell]) -> list[float]:

@@ -105,7 +105,7 @@ def _name(count: int, *, bleed: bool, at_origin: bool) -> IsolationGrade:
 def series(
     wiring: Wiring, source: Source, zone: frozenset[LineId], locks: Mapping[DeviceTag, str]
 ) -> tuple[DeviceTag, ...] | None:
-    """The fewest locked devices that stand between a source and the zone, in order of the way; None if no way exists."""
+    """The fewest locked devices between a source and the zone, in order of the way; None if no way exists."""
     starts = [source.line] if source.drive is None else []
     came: dict[LineId, tuple[int, LineId | None, DeviceTag | None]] = dict.fromkeys(starts, (0, None, None))
     queue = deque(starts)

@@ -13,8 +13,8 @@ DEAD: Interval = (0.0, 0.0)
 class State:
     """Positions, pressures [low, high] in Pa gauge, and at which end each piston stands (open, close, unknown).
 
-    `fed`: lines under compressed gas or a running source; `gassed`: those joined to compressed gas. `running`: live sources that are awake. `let_out`: live
-    sources that a vent takes.
+    `fed`: lines under compressed gas or a running source; `gassed`: those joined to compressed gas. `running`: live
+    sources that are awake. `let_out`: live sources that a vent takes.
     """
 
     positions: Mapping[DeviceTag, str]

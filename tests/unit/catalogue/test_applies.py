@@ -61,7 +61,7 @@ APPLIES = {
         "overhaul-air-pump": ("P-3", "P-4"),
         "overhaul-electric-pump": ("P-1", "P-2"),
         "replace-annular-regulator": ("RG-2",),
-        "replace-bottle-bladder": sum((bottles(f"BK-{n}", 8) for n in range(1, 5)), ()) + ("SB-1/1",),
+        "replace-bottle-bladder": (*(b for n in range(1, 5) for b in bottles(f"BK-{n}", 8)), "SB-1/1"),
         "replace-bypass-valve": ("BP-1",),
         "replace-four-way-valve": tuple(f"HV-{n}" for n in range(1, 9)),
         "replace-hoses": JACK_UP_FUNCTIONS,

@@ -210,14 +210,14 @@ ERRORS: dict[str, Case] = {
         lambda d: d["header"]["fittings"][0].update(full_scale="2000 psi"),
         "header.fittings[0].full_scale",
         "a full scale of 2000 psi",
-        "more than 3000 psi on its line",
+        "at least 3000 psi, the pressure of its line",
     ),
     "a gauge too small for its regulator": (
         "land-rig",
         lambda d: d["regulators"][0]["fittings"][0].update(full_scale="1000 psi"),
         "regulators[0].fittings[0].full_scale",
         "a full scale of 1000 psi",
-        "more than 1500 psi on its line",
+        "at least 1500 psi, the pressure of its line",
     ),
     "a pump that starts above its stop": (
         "land-rig",
