@@ -14,7 +14,7 @@ def data_of(name: str) -> dict[str, Any]:
     document = load(EXAMPLES / f"{name}.yaml")
     assert isinstance(document, Document)
     data: Any = document.data
-    return deepcopy(data)  # type: ignore[no-any-return]
+    return deepcopy(data)
 
 
 def changed(name: str, change: Callable[[dict[str, Any]], object]) -> dict[str, Any]:
