@@ -50,11 +50,11 @@ def schema(kind: str) -> Any:
 
 
 def without_bleeds(folder: Path) -> Path:
-    """The land rig as somebody might have built it without a single bleed valve."""
+    """The land rig without a single bleed valve, and with regulators that let nothing back to the tank."""
     lines = LAND_RIG.read_text(encoding="utf-8").splitlines()
     kept = ["    bleed: none" if line.startswith("    bleed:") else line for line in lines if "kind: bleed" not in line]
     file = folder / "no-bleeds.yaml"
-    file.write_text("\n".join(kept), encoding="utf-8")
+    file.write_text("\n".join(kept).replace("relieving: yes", "relieving: no"), encoding="utf-8")
     return file
 
 
@@ -303,7 +303,7 @@ def test_a_refused_plan_names_line_and_reason_and_writes_nothing(tmp_path: Path)
     done = run("permit", file, *HOSES, "upper-pipe-rams", "--out", out, "--format", "html,json", code=FOUND)
     head, *reasons, advice = done.stderr.splitlines()
     assert head == "refused: no safe plan for replace-hoses on upper-pipe-rams of HCU-7"
-    assert any(reason.startswith("  header: Pressure stays trapped here.") for reason in reasons), reasons
+    assert any(reason.startswith("  upper-pipe-rams.open: Pressure stays trapped here.") for reason in reasons), reasons
     assert "Open nothing" in advice
     assert done.stdout == ""
     assert not out.exists()

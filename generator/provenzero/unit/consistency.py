@@ -188,7 +188,11 @@ def _pressures(unit: Unit) -> Iterator[_Fault]:
         scale = part.full_scale_pag if isinstance(part, Instrument) else None
         high = None if scale is None else _highest(unit, path)
         if scale is not None and high is not None and scale < high:
-            yield _error((*path, "full_scale"), f"a full scale of {_psi(scale)}", f"at least {_psi(high)}, the pressure of its line")
+            yield _error(
+                (*path, "full_scale"),
+                f"a full scale of {_psi(scale)}",
+                f"at least {_psi(high)}, the pressure of its line",
+            )
 
 
 def _highest(unit: Unit, path: Path) -> float | None:
