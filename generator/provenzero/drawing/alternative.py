@@ -38,5 +38,5 @@ def alternative(scene: Scene, number: int, count: int, shown: Sequence[str]) -> 
 
 
 def _named(scene: Scene, role: Role, pattern: str) -> list[str]:
-    names = [line.name for key, line in scene.network.lines.items() if scene.marks.role(key) is role]
+    names = [line.name for key, line in scene.lines.items() if scene.marks.role(key) is role]
     return [pattern.format(names=", ".join(names))] if names else []

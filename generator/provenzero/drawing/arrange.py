@@ -7,7 +7,7 @@ run up and down in the corridor. What does not fit goes on to the next sheet, wh
 the same letters; sheets with functions alone carry two corridors.
 """
 
-from collections.abc import Sequence
+from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
 from provenzero.drawing.alternative import alternative, title
@@ -30,8 +30,8 @@ from provenzero.network.devices.pumps import LIQUID
 from provenzero.network.model import LineId, Network
 from provenzero.unit.model import ATMOSPHERE, HEADER, RESERVOIR, RETURNS, Unit
 
-WIDTH_MM = 190.0
-HEIGHT_MM = 250.0
+WIDTH_MM = 181.0
+HEIGHT_MM = 240.0
 SMALLEST = 0.92
 _SUCTION_AT = 2.2
 _LEFT_AT = 4.6
@@ -68,29 +68,40 @@ class _Sheet:
 
 
 def overview(unit: Unit, network: Network, marks: Marks, wording: Wording = ENGLISH) -> tuple[Drawing, ...]:
-    """Draw a unit with its marks, each device once, on sheets of at most 190 by 250 mm.
+    """Draw a unit with its marks, each device once, on sheets of at most 181 by 240 mm, which A4 and Letter both have room for.
 
     The letters are 2.4 mm high or more; where that saves a sheet all is drawn a little smaller, with letters of 2.2 mm.
     """
-    scene = Scene(unit=unit, network=network, marks=marks, wording=wording, letters=letters_of(unit))
-    best: tuple[list[_Sheet], _Paper] | None = None
+    scene = Scene(
+        unit=unit, marks=marks, wording=wording, letters=letters_of(unit), devices=network.devices,
+        lines=network.lines, ports={(p.equipment, p.name): p.line for p in reversed(network.ports)},
+    )
+    sheets, paper = _sheets(scene)
+    return tuple(_draw(scene, sheet, paper, number, len(sheets)) for number, sheet in enumerate(sheets, start=1))
+
+
+def _sheets(scene: Scene) -> tuple[list[_Sheet], _Paper]:
+    """The fewest sheets, and of as many those with the larger letters and the wider functions."""
+    tried = []
     for paper in (_Paper(1.0), _Paper(SMALLEST)):
-        sheets = _sheets(scene, paper)
-        if best is None or len(sheets) < len(best[0]):
-            best = sheets, paper
-        if len(sheets) == 1:
-            break
-    found, on = best if best is not None else ([], _Paper(1.0))
-    return tuple(_draw(scene, sheet, on, number, len(found)) for number, sheet in enumerate(found, start=1))
+        for left, right in _blocks(scene, paper):
+            whole = _Sheet(left, (right,) if right else ())
+            if _fits(scene, paper, whole, ""):
+                return [whole], paper
+            tried.append((paper, left, right))
+    found = [(_divide(scene, paper, left, right), paper) for paper, left, right in tried]
+    return min(found, key=lambda item: len(item[0]))
 
 
-def _sheets(scene: Scene, paper: _Paper) -> list[_Sheet]:
+def _blocks(scene: Scene, paper: _Paper) -> Iterator[tuple[tuple[Block, ...], tuple[Block, ...]]]:
+    """The blocks of both columns: functions as wide as there is room, then functions as narrow as they can be."""
     silent = frozenset({*scene.letters, AIR, LineId(RESERVOIR), LineId(ATMOSPHERE)})
     room = paper.width - _LEFT_AT - width_of(_shared(scene.unit))
     narrow = _right(scene, _NARROW, silent)
-    left = _left(scene, max(room - _column(narrow), room / 2), silent)
-    wide = _right(scene, room - _column(left), silent)
-    return min((_divide(scene, paper, left, right) for right in (wide, narrow)), key=len)
+    left = tuple(_left(scene, max(room - _column(narrow), room / 2), silent))
+    if room - _column(left) > _NARROW:
+        yield left, tuple(_right(scene, room - _column(left), silent))
+    yield left, tuple(narrow)
 
 
 def _shared(unit: Unit) -> list[LineId]:
@@ -130,9 +141,6 @@ def _left(scene: Scene, limit: float, silent: frozenset[LineId]) -> list[Block]:
 
 
 def _divide(scene: Scene, paper: _Paper, left: Sequence[Block], right: Sequence[Block]) -> list[_Sheet]:
-    whole = _Sheet(tuple(left), (tuple(right),) if right else ())
-    if _fits(scene, paper, whole, ""):
-        return [whole]
     sheets = []
     makers, spenders = list(left), list(right)
     while makers or spenders:
@@ -165,7 +173,14 @@ def _fits(scene: Scene, paper: _Paper, sheet: _Sheet, number: str) -> bool:
     if width > paper.width or max(_stack(sheet.left), *(_stack(pane) for pane in sheet.panes), 0.0) > paper.height:
         return False
     foot = max(column.foot for column in _laid(scene, sheet))
-    return foot + legend_block(scene, width, number).height <= paper.height
+    return foot + legend_block(scene, width, number, _ringed(scene, bool(number))).height <= paper.height
+
+
+def _ringed(scene: Scene, several: bool) -> list[LineId]:
+    """The lines that end in a ring with a letter: all shared ones on several sheets, else the one that others name."""
+    if several:
+        return [*_shared(scene.unit), LIQUID]
+    return [LineId(RETURNS)] if scene.unit.common_returns else []
 
 
 def _column(blocks: Sequence[Block]) -> float:
@@ -230,16 +245,16 @@ def _draw(scene: Scene, sheet: _Sheet, paper: _Paper, number: int, count: int) -
     width = _width(scene, sheet)
     words = scene.wording.sheet.format(number=number, count=count) if count > 1 else ""
     columns = _laid(scene, sheet)
+    ringed = _ringed(scene, count > 1)
     for column in columns:
         for item in column.made:
             item.block.draw(canvas, item.x, item.y, column.way.left)
         for item in column.spent:
             item.block.draw(canvas, item.x, item.y, item.x)
-        ringed = frozenset(column.way.at) if count > 1 else frozenset({LineId(RETURNS)})
-        draw_corridor(canvas, scene, column.way, column.made, column.spent, ringed)
-        _suction(canvas, scene, column.made, ringed=count > 1)
+        draw_corridor(canvas, scene, column.way, column.made, column.spent, frozenset(ringed))
+        _suction(canvas, scene, column.made, ringed=LIQUID in ringed)
     foot = max(column.foot for column in columns)
-    legend = legend_block(scene, width, words)
+    legend = legend_block(scene, width, words, ringed)
     legend.draw(canvas, 0.0, foot, 0.0)
     shown = [name for column in columns for item in (*column.made, *column.spent) for name in item.block.names]
     return Drawing(

@@ -30,6 +30,7 @@ from provenzero.unit.model import HEADER, Bank
 _STEM = 1.7
 _NUB = 1.2
 _VALVE_TALL = 5.6
+_BESIDE = 3.6
 
 
 @dataclass(frozen=True, slots=True)
@@ -113,13 +114,15 @@ def _bottles_cell(scene: Scene, item: Bank, group: _Bottles, fluid: LineId) -> C
     side = scene.port(keys[0], "fluid") or fluid
     valves = [item.bottle_valves[number - 1].tag for number in numbers] if item.bottle_valves else []
     words = _words(item, group)
-    valve_words = tag(valves[0] if len(valves) == 1 else f"{valves[0]}..{valves[-1]}") if valves else Tag(())
+    valve_words = _valve_words(valves)
     stem = _STEM + (BOX_MARGIN + 0.2 if group.lock is not None else 0.0)
     foot = stem + (_VALVE_TALL + 1.0 + (BOX_MARGIN if group.lock is not None else 0.0) if valves else 0.0)
     top = foot + BOTTLE_HEIGHT + _NUB + 2.2
     margin = BOX_MARGIN if group.gas_lock is not None else 0.0
     shut_locked = group.lock is not None
     beside = _beside(scene, group, LineId(f"{keys[0]}.gas"))
+    told = scene.told(side) if valves else ""
+    beneath = _BESIDE + label_width(told) if told else 0.0
     left = max(words.width + BOTTLE_HALF, valve_words.width + 2.8 + (2 * LOCK_HALF + 1.4 if shut_locked else 0.0)) + 2 * ROOM
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
@@ -131,6 +134,10 @@ def _bottles_cell(scene: Scene, item: Bank, group: _Bottles, fluid: LineId) -> C
             )
             canvas.wire(side, (x, y - stem - _VALVE_TALL), (x, y - foot))
             canvas.alike(side, [LineId(f"{key}.fluid") for key in keys[1:]])
+            if told:
+                middle = y - foot + 0.5
+                leader(canvas, side, (x, middle), (x + _BESIDE, middle))
+                label(canvas, scene, side, (x + _BESIDE + label_width(told) / 2, middle))
             _beside_valve(canvas, group, valve_words, body, valves)
         else:
             canvas.wire(side, (x, y), (x, y - foot))
@@ -146,9 +153,16 @@ def _bottles_cell(scene: Scene, item: Bank, group: _Bottles, fluid: LineId) -> C
         _beside_gas(canvas, scene, group, (body.right, nub - _NUB - 1.1), gas)
 
     return Cell(
-        left=left, right=max(BOTTLE_HALF, 0.9 + margin + beside) + ROOM, up=max(top + margin, top + 2.0 if beside else 0.0),
+        left=left, right=max(BOTTLE_HALF, 0.9 + margin + beside, beneath) + ROOM, up=max(top + margin, top + 2.0 if beside else 0.0),
         down=1.0, line_in=fluid, line_out=fluid, body=None, clear=0.0, paint=paint,
     )
+
+
+def _valve_words(valves: list[str]) -> Tag:
+    """The tag of a bottle valve, or the first and the last of several."""
+    if len(valves) > 1:
+        return Tag((f"{valves[0]} ..", valves[-1]))
+    return tag(valves[0]) if valves else Tag(())
 
 
 def _words(item: Bank, group: _Bottles) -> Tag:

@@ -24,7 +24,7 @@ DOT = 0.65
 BAND = 1.9
 CORE = 1.2
 _HATCH_STEP = 1.2
-_ORDER = (Role.ZONE, Role.DEAD, Role.NEUTRAL, Role.UNKNOWN, Role.TRAPPED, Role.LIVE)
+_ORDER = (Role.ZONE, Role.DEAD, Role.VENTED, Role.NEUTRAL, Role.UNKNOWN, Role.TRAPPED, Role.LIVE)
 _KINDS = (Kind.LINE, Kind.SYMBOL, Kind.MARK, Kind.TAG, Kind.LABEL, Kind.LEGEND)
 
 

@@ -1,5 +1,7 @@
 """The legend: how each role of a line is drawn, and what the marks mean. Only what stands on the drawing is explained."""
 
+from collections.abc import Sequence
+
 from provenzero.drawing.block import Block
 from provenzero.drawing.canvas import Canvas, band
 from provenzero.drawing.metric import width_mm
@@ -7,6 +9,7 @@ from provenzero.drawing.model import Anchor, Fill, Kind, Pen, Polyline, Role, Sh
 from provenzero.drawing.scene import Scene
 from provenzero.drawing.symbols import box, ring, shut_off, words
 from provenzero.drawing.tags import down_arrow, lozenge_shapes, word_shapes
+from provenzero.network.model import LineId
 
 _SIZE = 2.4
 _SAMPLE = 17.0
@@ -14,9 +17,12 @@ _ROW = 4.1
 _PAD = 0.8
 
 
-def legend_block(scene: Scene, width: float, sheet: str) -> Block:
-    """The legend in a frame of a given width; `sheet` says which sheet it is, empty if there is only one."""
-    entries = _entries(scene, ringed=bool(sheet) or scene.unit.common_returns)
+def legend_block(scene: Scene, width: float, sheet: str, ringed: Sequence[LineId]) -> Block:
+    """The legend in a frame of a given width.
+
+    `sheet` says which sheet it is, empty if there is only one; `ringed` are the lines that end in rings with letters.
+    """
+    entries = _entries(scene, ringed)
     wide = _SAMPLE + 1.2 + max(width_mm(text, _SIZE) for _, text in entries) + 1.0
     columns = max(1, min(len(entries), int((width - 2 * _PAD) / wide)))
     rows = -(-len(entries) // columns)
@@ -24,7 +30,7 @@ def legend_block(scene: Scene, width: float, sheet: str) -> Block:
     height = rows * _ROW + 2 * _PAD + head
 
     def draw(canvas: Canvas, x: float, y: float, _: float) -> None:
-        shapes: list[Shape] = [box(x, y, x + width, y + height, fill=Fill.NONE, pen=Pen.FINE)]
+        shapes: list[Shape] = [box(x + 0.2, y + 0.2, x + width - 0.2, y + height - 0.2, fill=Fill.NONE, pen=Pen.FINE)]
         if sheet:
             shapes.append(Text(at=(x + width - _PAD, y + 3.4), words=sheet, size_mm=_SIZE, anchor=Anchor.END, bold=True))
         step = (width - 2 * _PAD) / columns
@@ -39,7 +45,7 @@ def legend_block(scene: Scene, width: float, sheet: str) -> Block:
     return Block(names=(), width=width, up=0.0, down=height, draw=draw)
 
 
-def _entries(scene: Scene, *, ringed: bool) -> list[tuple[tuple[Shape, ...], str]]:
+def _entries(scene: Scene, ringed: Sequence[LineId]) -> list[tuple[tuple[Shape, ...], str]]:
     text = scene.wording
     marks = scene.marks
     found = set(marks.lines.values())
@@ -62,8 +68,7 @@ def _entries(scene: Scene, *, ringed: bool) -> list[tuple[tuple[Shape, ...], str
     entries.append(((*_valves((-4.0,), opened=False), *_valves((4.0,), opened=True)), text.legend_closed))
     square = (box(-1.7, -1.7, 1.7, 1.7, fill=Fill.TINT, pen=Pen.HEAVY),)
     entries.append((square, text.legend_force))
-    if ringed:
-        entries.append((ring("A").shapes, text.legend_ring))
+    entries += [(ring(scene.letters[line]).shapes, scene.name(line)) for line in ringed]
     entries.append(((words((-2.0, 0.9), text.closing), words((2.0, 0.9), text.opening)), text.legend_chambers))
     return entries
 

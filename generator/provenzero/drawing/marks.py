@@ -8,7 +8,7 @@ from provenzero.drawing.model import Role
 from provenzero.network.model import DeviceTag, LineId, Network, PassageKind
 from provenzero.plan.model import Plan, Purpose
 from provenzero.state.model import State
-from provenzero.unit.model import ATMOSPHERE
+from provenzero.unit.model import ATMOSPHERE, RESERVOIR
 
 
 class Vent(StrEnum):
@@ -20,14 +20,13 @@ class Vent(StrEnum):
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Marks:
-    """The marks of one moment. `pistons`: open, close or unknown by function; `on`: the equipment that is worked on."""
+    """The marks of one moment. `pistons`: open, close or unknown by function."""
 
     lines: Mapping[LineId, Role]
     positions: Mapping[DeviceTag, str]
     locks: Mapping[DeviceTag, int]
     open_vents: Mapping[DeviceTag, Vent]
     pistons: Mapping[str, str]
-    on: str
 
     def role(self, line: LineId) -> Role:
         """The role of a line; neutral if nothing is said about it."""
@@ -42,7 +41,6 @@ def plain(network: Network) -> Marks:
         locks={},
         open_vents={},
         pistons={},
-        on="",
     )
 
 
@@ -61,7 +59,6 @@ def marks_of(plan: Plan) -> Marks:
             if lock.purpose is Purpose.VENT or lock.keeps_open
         },
         pistons=state.pistons,
-        on=plan.on,
     )
 
 
@@ -71,6 +68,8 @@ def _role(
     if line in zone:
         return Role.ZONE
     low, high = state.pressures[line]
+    if line in (RESERVOIR, ATMOSPHERE) and high <= 0.0:
+        return Role.VENTED
     if line in dead or high <= 0.0:
         return Role.DEAD
     if line in state.fed or network.lines[line].medium.value == "electric" or _charged(network, line):

@@ -24,11 +24,12 @@ class Role(StrEnum):
 
 
 class Pen(StrEnum):
-    """How a shape's outline is drawn; the first six draw lines of the circuit."""
+    """How a shape's outline is drawn; the first seven draw lines of the circuit."""
 
     NEUTRAL = "neutral"
     LIVE = "live"
     DEAD = "dead"
+    VENTED = "vented"
     TRAPPED = "trapped"
     UNKNOWN = "unknown"
     ZONE_EDGE = "zone_edge"

@@ -5,7 +5,7 @@ from provenzero.drawing.canvas import Canvas
 from provenzero.drawing.cells import LEAD, ROOM, Cell, device_cell, standing, through
 from provenzero.drawing.feed import Feed, feed
 from provenzero.drawing.row import Row
-from provenzero.drawing.scene import AIR, Inline, Scene
+from provenzero.drawing.scene import Inline, Scene
 from provenzero.drawing.symbols import DRIVE_RADIUS, PUMP_RADIUS, check_valve, drive, pump, shaft
 from provenzero.drawing.tags import tag
 from provenzero.network.devices.pumps import LIQUID
@@ -83,5 +83,5 @@ def _energy(scene: Scene, item: Pump) -> Feed | None:
     if load is None:
         return None
     if item.drive is Drive.AIR:
-        return feed(scene, scene.wording.air, AIR, load, item.energy)
-    return feed(scene, item.supply, LineId(f"supply.{item.supply}"), load, item.energy)
+        return feed(scene, scene.wording.air, load, item.energy)
+    return feed(scene, item.supply, load, item.energy)

@@ -24,7 +24,7 @@ def air_block(scene: Scene, item: AirSupply, limit_mm: float, silent: frozenset[
     goes = to_flag(scene.wording.air)
     start = LineId("air.supply")
     cells = elements(scene, item.run, start)
-    if DeviceTag("air-piping") in scene.network.devices:
+    if DeviceTag("air-piping") in scene.devices:
         cells.append(_joint("air-piping", start, AIR))
     cells += fittings(scene, item.fittings, AIR)
     told = scene.told(AIR)
@@ -68,11 +68,11 @@ def panel_block(scene: Scene, item: Panel) -> Block:
 def _feeds(scene: Scene, item: Panel) -> list[Feed]:
     words = scene.wording.air
     if item.kind is PanelKind.PNEUMATIC:
-        return [feed(scene, words, AIR, scene.port(item.tag, "air") or AIR, item.energy)]
+        return [feed(scene, words, scene.port(item.tag, "air") or AIR, item.energy)]
     supply = LineId(f"supply.{item.supply}")
-    chains = [feed(scene, item.supply, supply, scene.port(item.tag, "power") or supply, item.energy)]
+    chains = [feed(scene, item.supply, scene.port(item.tag, "power") or supply, item.energy)]
     if item.through_pilot_air:
-        chains.append(feed(scene, words, AIR, scene.port(item.tag, "air") or AIR, item.pilot_air))
+        chains.append(feed(scene, words, scene.port(item.tag, "air") or AIR, item.pilot_air))
     return chains
 
 
@@ -81,7 +81,7 @@ def backup_block(scene: Scene, item: NitrogenBackup, limit_mm: float, silent: fr
     gas, target = LineId(f"{item.tag}.gas"), LineId(item.delivers_to)
     cells = [_gas_cell(scene, item, gas), *elements(scene, item.run, gas)]
     piping = f"{item.tag}-piping"
-    if DeviceTag(piping) in scene.network.devices:
+    if DeviceTag(piping) in scene.devices:
         cells.append(_joint(piping, gas, target))
     row = Row(scene, gas, cells, limit_mm=limit_mm, silent=silent, from_first=True)
     return Block(

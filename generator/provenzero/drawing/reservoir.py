@@ -8,8 +8,8 @@ from provenzero.drawing.model import Anchor, Box, Fill, Pen, Shape, Text
 from provenzero.drawing.plates import name_over, name_width
 from provenzero.drawing.row import Row
 from provenzero.drawing.scene import Scene
-from provenzero.drawing.symbols import Symbol, breather, box, entry, stroke
-from provenzero.drawing.tags import TAG_MM, label_shapes, label_width
+from provenzero.drawing.symbols import Symbol, box, breather, entry, stroke
+from provenzero.drawing.tags import TAG_MM, label, label_width
 from provenzero.network.devices.pumps import LIQUID
 from provenzero.network.model import LineId
 from provenzero.unit.model import ATMOSPHERE, RESERVOIR, RETURNS, Reservoir
@@ -29,10 +29,12 @@ def reservoir_block(scene: Scene, item: Reservoir, width: float, silent: frozens
     beside = max(limb, drain.width + LEAD + 4.6 if drain is not None else 0.0)
     right = max(width - beside, _LEFT + 22.0 + width_mm(item.tag, TAG_MM, bold=True))
     limb_at = _LIMB if drain is None else min(_LIMB, _OUTLET - drain.up - (2.2 if scene.told(returns) else 1.3))
-    tank = _tank(scene, item, right - _LEFT)
+    tank = _tank(item, right - _LEFT)
 
     def draw(canvas: Canvas, x: float, y: float, end: float) -> None:
         canvas.symbol(tank, (x + _LEFT, y), item.tag)
+        for line, height in ((LineId(RESERVOIR), 1.9), (LIQUID, 5.6)):
+            label(canvas, scene, line, (x + _LEFT + 1.0 + label_width(scene.told(line)) / 2, y + height))
         canvas.wire(LIQUID, (x, y + _OUTLET), (x + _LEFT, y + _OUTLET))
         at = x + _LEFT + _BREATHER
         canvas.wire(LineId(RESERVOIR), (at, y), (at, y - 1.0))
@@ -63,14 +65,11 @@ def _drain(scene: Scene, item: Reservoir, silent: frozenset[LineId]) -> Row | No
     return Row(scene, LIQUID, [cell], limit_mm=60.0, silent=silent)
 
 
-def _tank(scene: Scene, item: Reservoir, width: float) -> Symbol:
-    """The tank with its tag, and inside it the words on its gas space and on its fluid."""
+def _tank(item: Reservoir, width: float) -> Symbol:
+    """The tank with its tag; the words on its gas space and on its fluid stand inside."""
     shapes: list[Shape] = [
         box(0, 0, width, _DEEP, pen=Pen.NONE), stroke((0, 0), (0, _DEEP), (width, _DEEP), (width, 0), pen=Pen.HEAVY),
         box(0.4, 2.6, width - 0.4, _DEEP - 0.4, fill=Fill.TINT, pen=Pen.NONE), stroke((0.3, 2.6), (width - 0.3, 2.6), pen=Pen.FINE),
         Text(at=(width - 1.5, 6.0), words=item.tag, size_mm=TAG_MM, anchor=Anchor.END, bold=True),
     ]
-    space, fluid = LineId(RESERVOIR), LIQUID
-    shapes += label_shapes(scene, space, (1.0 + label_width(scene.told(space)) / 2, 1.9))
-    shapes += label_shapes(scene, fluid, (1.0 + label_width(scene.told(fluid)) / 2, 5.6))
     return Symbol(shapes=tuple(shapes), body=Box(0, 0, width, _DEEP))

@@ -7,7 +7,7 @@ from provenzero.drawing.marks import Marks, Vent
 from provenzero.drawing.model import Role
 from provenzero.drawing.wording import Wording
 from provenzero.network.devices.pumps import LIQUID
-from provenzero.network.model import DeviceTag, LineId, Network
+from provenzero.network.model import Device, DeviceTag, Line, LineId
 from provenzero.unit.model import HEADER, RETURNS, CheckValve, Element, Reducer, Strainer, Unit, Valve
 
 Inline = Valve | CheckValve | Strainer | Reducer
@@ -21,7 +21,9 @@ class Scene:
     """What is drawn. `letters`: the letter in the ring of each line that goes through many places."""
 
     unit: Unit
-    network: Network
+    devices: Mapping[DeviceTag, Device]
+    lines: Mapping[LineId, Line]
+    ports: Mapping[tuple[str, str], LineId]
     marks: Marks
     wording: Wording
     letters: Mapping[LineId, str]
@@ -29,7 +31,7 @@ class Scene:
     def position(self, tag: str) -> str:
         """Where a device stands."""
         key = DeviceTag(tag)
-        return self.marks.positions.get(key, self.network.devices[key].normal)
+        return self.marks.positions.get(key, self.devices[key].normal)
 
     def lock(self, tag: str) -> int | None:
         """The number of the lock on a device."""
@@ -41,14 +43,13 @@ class Scene:
 
     def ends(self, tag: str) -> tuple[LineId, LineId]:
         """The two lines that a device joins when it is open, in the order of flow."""
-        positions = self.network.devices[DeviceTag(tag)].positions
+        positions = self.devices[DeviceTag(tag)].positions
         way = next(positions[name] for name in _THROUGH if name in positions)[0]
         return way.source, way.target
 
     def port(self, equipment: str, name: str) -> LineId | None:
         """The line at a port of a piece of equipment."""
-        found = self.network.opened(equipment, (name,))
-        return found[0] if found else None
+        return self.ports.get((equipment, name))
 
     def told(self, line: LineId) -> str:
         """The word that must stand on a line, empty if none."""

@@ -125,6 +125,9 @@ def _directions(wiring: Wiring, state: State, region: Region, attempt: Attempt) 
     """
     if region.obstacles:
         return []
+    idle = _idle_drives(wiring, region) if any(o.words == "not_quiet" for o in attempt.obstacles) else frozenset()
+    if idle:
+        return [idle]
     trapped = [o.line for o in attempt.obstacles if o.words == "trapped"]
     lines = trapped or list(attempt.unheld)
     if not lines:
@@ -147,6 +150,12 @@ def _directions(wiring: Wiring, state: State, region: Region, attempt: Attempt) 
                 break
             banned[crossed[0].device] = region.barriers[crossed[0].device]
     return found
+
+
+def _idle_drives(wiring: Wiring, region: Region) -> frozenset[LineId]:
+    """Drives, still live, of automatic pumps: one may be called when a barrier takes the last bank from its line."""
+    drives = {s.drive for s in wiring.network.sources if s.drive is not None and s.senses is not None}
+    return frozenset(drives) - region.dead
 
 
 def _beyond(wiring: Wiring, region: Region) -> list[frozenset[LineId]]:

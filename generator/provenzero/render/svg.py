@@ -26,6 +26,7 @@ _WIDTHS = {
     Pen.NEUTRAL: 0.4,
     Pen.LIVE: 0.75,
     Pen.DEAD: 0.3,
+    Pen.VENTED: 0.3,
     Pen.TRAPPED: 0.55,
     Pen.UNKNOWN: 0.45,
     Pen.ZONE_EDGE: 1.9,

@@ -35,6 +35,7 @@ class _Group:
     vent: bool
     stiff: bool
     gas: bool = False
+    bottle: bool = False
     live: bool = False
     drained: bool = False
 
@@ -159,8 +160,9 @@ def _begin(wiring: Wiring, group_of: Mapping[LineId, int], before: Mapping[LineI
         low = min(before[line][0] for line in ([k for k in lines if k in bottles] if stiff else lines))
         high = max(before[line][1] for line in lines)
         # An empty bottle that trapped liquid finds takes some in, and then pushes.
-        gas = bool(stiff) or (high > 0.0 and any(line in bottles for line in lines))
-        groups.append(_Group(low, high, vent=False, stiff=gas, gas=gas))
+        bottle = any(line in bottles for line in lines)
+        gas = bottle and high > 0.0
+        groups.append(_Group(low, high, vent=False, stiff=gas, gas=gas, bottle=bottle))
     return groups
 
 
@@ -201,9 +203,9 @@ def _pass_on(groups: list[_Group], edge: _Edge) -> bool:
         _perhaps(up, down)
     elif edge.kind is PassageKind.RELIEF:
         if up.high > edge.limit and not down.vent:
-            down.high = max(down.high, up.high)
+            _raise(down, up.high)
     elif not (down.vent or down.drained):
-        down.high = max(down.high, min(up.high, edge.limit))
+        _raise(down, min(up.high, edge.limit))
         sure = min(up.low, edge.limit)
         if up.stiff and sure >= down.low:
             down.low = sure
@@ -211,8 +213,15 @@ def _pass_on(groups: list[_Group], edge: _Edge) -> bool:
         elif up.low < down.low and not down.stiff:
             down.low = up.low
         if down.high > up.high and not (up.vent or up.drained or up.gas or up.live):
-            up.high = down.high  # what is trapped beyond could leak back
+            _raise(up, down.high)  # what is trapped beyond could leak back
     return old != (up.low, up.high, down.low, down.high, down.stiff)
+
+
+def _raise(group: _Group, high: float) -> None:
+    """Lift the high end of a group; a bottle in it takes some in, and then pushes."""
+    group.high = max(group.high, high)
+    if group.bottle and group.high > 0.0:
+        group.gas = group.stiff = True
 
 
 def _perhaps(one: _Group, other: _Group) -> None:
@@ -220,7 +229,8 @@ def _perhaps(one: _Group, other: _Group) -> None:
     low, high = min(one.low, other.low), max(one.high, other.high)
     for group in (one, other):
         if not group.vent:
-            group.low, group.high = low, high
+            group.low = low
+            _raise(group, high)
 
 
 def _reaches_vent(groups: list[_Group], edges: list[_Edge], start: int) -> bool:

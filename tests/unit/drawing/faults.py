@@ -102,7 +102,7 @@ def texts_overlap(drawing: Drawing) -> Iterator[str]:
     for group, text, box in words:
         for symbol, body in outlines:
             own = symbol is group or (group.kind is Kind.MARK and symbol.names == group.names)
-            if not own and overlap(box, body) and not lozenge_corner(symbol, box):
+            if not own and overlap(box, body) and not lozenge_corner(symbol, box) and not within(box, body):
                 yield f"words {text.words} of {group.names} lie on {symbol.kind} {symbol.names}"
         for line, piece in pieces:
             if group.kind not in (Kind.LABEL, Kind.SYMBOL) and overlap(box, piece):
@@ -113,7 +113,7 @@ def texts_overlap(drawing: Drawing) -> Iterator[str]:
     for label, box in outlines:
         if label.kind is Kind.LABEL:
             for symbol, body in outlines:
-                if symbol.kind is Kind.SYMBOL and overlap(box, body):
+                if symbol.kind is Kind.SYMBOL and overlap(box, body) and not within(box, body):
                     yield f"label of {label.names} lies on {symbol.names}"
             for line, piece in pieces:
                 if line.names != label.names and overlap(box, piece):
@@ -176,6 +176,11 @@ def overlap(a: Box, b: Box) -> bool:
     return (
         a.left < b.right - TOUCH and b.left < a.right - TOUCH and a.top < b.bottom - TOUCH and b.top < a.bottom - TOUCH
     )
+
+
+def within(a: Box, b: Box) -> bool:
+    """Words may stand inside a tank that has room for them."""
+    return a.left > b.left and a.right < b.right and a.top > b.top and a.bottom < b.bottom
 
 
 def shared(a1: float, a2: float, b1: float, b2: float) -> float:
