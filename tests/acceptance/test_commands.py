@@ -90,7 +90,8 @@ def test_new_in_a_folder_that_is_not_there_says_so(tmp_path: Path) -> None:
 @pytest.mark.parametrize("file", [*sorted(EXAMPLES.glob("*.yaml")), *POSITIVE], ids=lambda file: file.stem)
 def test_check_takes_a_good_description(file: Path) -> None:
     done = run("check", file, code=DONE)
-    assert done.stdout.startswith("unit: HCU-")
+    assert done.stdout.split()[:1] == ["unit"]
+    assert done.stdout.split()[1].startswith("HCU-")
     assert done.stderr == ""
 
 
@@ -100,7 +101,7 @@ def test_check_lists_each_unknown_with_its_line() -> None:
     told = [line for line in done.stdout.splitlines() if line.startswith("line ")]
     assert len(told) == sum(line.count(" unknown") for line in lines if not line.startswith("#"))
     for line in told:
-        assert "unknown" in lines[int(line.split(":")[0].removeprefix("line ")) - 1]
+        assert "unknown" in lines[int(line.split()[1]) - 1]
 
 
 def test_check_tells_a_machine_the_same_as_a_person() -> None:

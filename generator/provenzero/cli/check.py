@@ -5,7 +5,7 @@ from typing import Annotated
 
 import typer
 
-from provenzero.cli.report import DONE, FOUND, Form, as_json, bad_input, data_of, say, tell
+from provenzero.cli.report import DONE, FOUND, Form, as_json, bad_input, data_of, say, table, tell
 from provenzero.unit.model import Unit
 
 
@@ -31,10 +31,11 @@ def check(
         raise typer.Exit(code)
     for finding in loaded.findings:
         tell(str(finding))
-    for key, value in _facts(loaded.unit).items():
-        say(f"{key}: {value}")
-    for note in loaded.unit.assumptions:
-        say(f"line {note.line}: {note.path} is not known; {note.taken}")
+    table(("Unit", ""), list(_facts(loaded.unit).items()))
+    if loaded.unit.assumptions:
+        say("")
+        rows = [(f"line {note.line}", note.path, note.taken) for note in loaded.unit.assumptions]
+        table(("Where", "Not known", "What is taken"), rows)
     raise typer.Exit(code)
 
 

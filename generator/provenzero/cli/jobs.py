@@ -5,7 +5,7 @@ from typing import Annotated
 
 import typer
 
-from provenzero.cli.report import Form, as_json, bad_input, say
+from provenzero.cli.report import Form, as_json, bad_input, table
 
 
 def jobs(
@@ -29,10 +29,7 @@ def jobs(
     if form is Form.JSON:
         as_json({"jobs": [{"job": job.id, "title": job.title, "on": list(on)} for job, on in pairs]})
         return
-    width = max(len(job.id) for job, _ in pairs)
-    for job, on in pairs:
-        say(f"{job.id:<{width}}  {job.title}")
-        say(f"{'':<{width}}    on {', '.join(_short(on))}")
+    table(("Job", "What", "On"), [(job.id, job.title, ", ".join(_short(on))) for job, on in pairs])
 
 
 def _short(on: tuple[str, ...]) -> list[str]:

@@ -8,7 +8,7 @@ from typing import TYPE_CHECKING, Annotated
 
 import typer
 
-from provenzero.cli.report import BAD_INPUT, FOUND, bad_input, mistake, say, tell
+from provenzero.cli.report import BAD_INPUT, FOUND, bad_input, mistake, progress, say, tell
 
 if TYPE_CHECKING:
     from provenzero.pipeline import Permit
@@ -147,9 +147,9 @@ def _content(made: "Permit", form: str, pages: Callable[[], str]) -> bytes:
         return pages().encode("utf-8")
     from provenzero.render.pdf import PdfUnavailableError, pdf  # noqa: PLC0415 - a second to load
 
-    tell("building the PDF ...")
     try:
-        return pdf(pages())
+        with progress("building the PDF"):
+            return pdf(pages())
     except PdfUnavailableError as error:
         tell(str(error))
         raise typer.Exit(BAD_INPUT) from error

@@ -1,7 +1,9 @@
 """Findings and results to a person or to a machine; exit codes."""
 
 import json
-from collections.abc import Iterable, Mapping
+import sys
+from collections.abc import Iterable, Iterator, Mapping, Sequence
+from contextlib import contextmanager
 from enum import StrEnum
 from typing import Any, NoReturn
 
@@ -29,6 +31,43 @@ def say(words: str) -> None:
 def tell(words: str) -> None:
     """A message beside the result."""
     typer.echo(words, err=True)
+
+
+def table(heads: Sequence[str], rows: Iterable[Sequence[str]]) -> None:
+    """A table: drawn on a terminal, columns of plain text in a pipe or a file."""
+    listed = [[_plain(cell) for cell in row] for row in rows]
+    if sys.stdout.isatty():
+        from rich.console import Console  # noqa: PLC0415 - only for eyes
+        from rich.table import Table  # noqa: PLC0415
+        from rich.text import Text  # noqa: PLC0415
+
+        drawn = Table(show_lines=True)
+        for i, head in enumerate(heads):
+            drawn.add_column(head, no_wrap=i == 0, overflow="fold")
+        for row in listed:
+            drawn.add_row(*(Text(cell) for cell in row))
+        Console().print(drawn)
+        return
+    widths = [max((len(row[i]) for row in listed), default=0) for i in range(len(heads))]
+    for row in listed:
+        say("  ".join(f"{cell:<{width}}" for cell, width in zip(row, widths, strict=True)).rstrip())
+
+
+@contextmanager
+def progress(words: str) -> Iterator[None]:
+    """Say that something takes a moment: a moving line on a terminal, one plain line elsewhere."""
+    if not sys.stderr.isatty():
+        tell(f"{words} ...")
+        yield
+        return
+    from rich.console import Console  # noqa: PLC0415 - only for eyes
+
+    with Console(stderr=True).status(words):
+        yield
+
+
+def _plain(cell: str) -> str:
+    return "".join(c if c.isprintable() else " " for c in cell)
 
 
 def as_json(data: Mapping[str, Any]) -> None:
