@@ -80,9 +80,7 @@ def test_every_derivative_of_the_helmholtz_energy_is_that_of_the_library(tempera
 
 @pytest.mark.parametrize("celsius", [-80, -20, 0, 20, 60, 120])
 @pytest.mark.parametrize("start_bar", [70, 140, 207, 345, 700, 1000])
-def test_a_fast_discharge_ends_where_the_library_says_even_where_it_condenses(
-    start_bar: float, celsius: float
-) -> None:
+def test_a_fast_discharge_ends_where_the_library_says_even_where_it_condenses(start_bar: float, celsius: float) -> None:
     # The library solves for (p, s) to about 1e-8 only; hence the wider tolerance here.
     nitrogen = library()
     start = gas_state(start_bar * BAR, ICE + celsius)

@@ -95,9 +95,7 @@ def test_the_same_bottle_with_published_compressibility_factors() -> None:
     assert by_hand == pytest.approx(4.91, abs=0.01)
     at_20 = [compressibility_factor(p, WARM) for p in pressures]
     assert at_20 == pytest.approx([0.995, 0.997, 1.058], abs=5e-4)
-    assert [compressibility_factor(p, 299.0) for p in pressures] == pytest.approx(
-        [0.998, 1.001, 1.062], abs=6e-4
-    )
+    assert [compressibility_factor(p, 299.0) for p in pressures] == pytest.approx([0.998, 1.001, 1.062], abs=6e-4)
     assert at_20 == pytest.approx(published, rel=0.025)
     assert usable_slow_m3(bottle(), 3000 * PSI, 1200 * PSI, WARM) / GALLON == pytest.approx(4.79, abs=0.005)
 
@@ -122,9 +120,7 @@ def test_trapped_oil_in_a_rigid_container_gains_6900_psi() -> None:
 def test_trapped_mineral_oil_gains_about_eleven_bar_per_kelvin() -> None:
     # Fluid-power reference page: about 11 bar per degC, about 90 psi per degF.
     oil = liquid_properties("mineral_oil")
-    low, high = (
-        pressure_rise_pa_k(e, k) for e, k in zip(oil.expansion_per_k, oil.bulk_modulus_pa, strict=True)
-    )
+    low, high = (pressure_rise_pa_k(e, k) for e, k in zip(oil.expansion_per_k, oil.bulk_modulus_pa, strict=True))
     assert low < 11e5 < high
     assert low < 90 * PSI * PER_DEGF < high
 

@@ -90,9 +90,7 @@ def deliver_fast(charge: GasCharge, start_pag: float, temperature_k: float, deli
     start, end = _volumes(charge, start_pag, temperature_k, delivered_m3)
     if end == start:
         return _still(charge, start_pag, temperature_k, start)
-    state = to_density_fast(
-        _start_state(charge, start_pag, temperature_k, start), nitrogen_mass_kg(charge) / end
-    )
+    state = to_density_fast(_start_state(charge, start_pag, temperature_k, start), nitrogen_mass_kg(charge) / end)
     return _after(charge, start, end, (state.pressure_pa, state.temperature_k))
 
 
@@ -224,9 +222,7 @@ def gas_temperature_after_k(
     return gas_temperature_k + (surroundings_k - gas_temperature_k) * heat_exchanged(time_s, time_constant_s)
 
 
-def _volumes(
-    charge: GasCharge, start_pag: float, temperature_k: float, delivered_m3: float
-) -> tuple[float, float]:
+def _volumes(charge: GasCharge, start_pag: float, temperature_k: float, delivered_m3: float) -> tuple[float, float]:
     check_range("delivered_m3", delivered_m3, 0.0, math.inf)
     start = gas_volume_m3(charge, start_pag, temperature_k)
     return start, min(charge.gas_volume_m3, start + delivered_m3)
@@ -247,9 +243,7 @@ def _still(charge: GasCharge, start_pag: float, temperature_k: float, volume: fl
     return _after(charge, volume, volume, (state.pressure_pa, temperature_k))
 
 
-def _after(
-    charge: GasCharge, start: float, end: float, pressure_and_temperature: tuple[float, float]
-) -> Discharge:
+def _after(charge: GasCharge, start: float, end: float, pressure_and_temperature: tuple[float, float]) -> Discharge:
     pressure, temperature = pressure_and_temperature
     emptied = _is_empty(charge, end)
     return Discharge(

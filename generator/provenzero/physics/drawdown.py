@@ -7,9 +7,7 @@ from provenzero.physics.isentrope import gas_state, to_pressure_fast
 from provenzero.physics.standard import absolute_pa, check_range, gauge_pag
 
 
-def precharge_by_hand_rule_pag(
-    removed_m3: float, gas_volume_m3: float, start_pag: float, end_pag: float
-) -> float:
+def precharge_by_hand_rule_pag(removed_m3: float, gas_volume_m3: float, start_pag: float, end_pag: float) -> float:
     """Give the precharge that a drawdown shows, by the hand rule of the trade: ideal gas, gauge pressures.
 
     Formula: p0 = (Vr/Va) pf ps/(ps - pf).
@@ -146,9 +144,7 @@ def _check(removed_m3: float, gas_volume_m3: float, start_pag: float, end_pag: f
         raise ValueError("end_pag equals start_pag; a drawdown without a fall of pressure says nothing")
 
 
-def _precharge_pag(
-    removed_share: float, densities: tuple[float, float], temperature_k: float, densest: float
-) -> float:
+def _precharge_pag(removed_share: float, densities: tuple[float, float], temperature_k: float, densest: float) -> float:
     start, end = densities
     needed = removed_share / (1.0 / end - 1.0 / start)
     if needed > densest * (1.0 + 1e-12):

@@ -112,9 +112,7 @@ def tnt_equivalent_kg(energy_j: float) -> float:
     return energy_j / TNT_J_KG
 
 
-def safe_distance_m(
-    energy_j: float, scaled_distance_m_per_cbrt_kg: float = SCALED_DISTANCE_M_PER_CBRT_KG
-) -> float:
+def safe_distance_m(energy_j: float, scaled_distance_m_per_cbrt_kg: float = SCALED_DISTANCE_M_PER_CBRT_KG) -> float:
     """Give the distance to keep from a gas-filled space of a stored energy.
 
     Formula: the greater of R = Rs (2 TNT)^(1/3) and 30 m up to 135.5 MJ, 60 m up to 271 MJ.
@@ -132,9 +130,7 @@ def safe_distance_m(
     Source: ASME PCC-2, Article 501, Mandatory Appendix III, 2015 and later (2008 has no factor 2).
     """
     check_range("energy_j", energy_j, 0.0, 1e15)
-    check_range(
-        "scaled_distance_m_per_cbrt_kg", scaled_distance_m_per_cbrt_kg, SCALED_DISTANCE_M_PER_CBRT_KG, 1000.0
-    )
+    check_range("scaled_distance_m_per_cbrt_kg", scaled_distance_m_per_cbrt_kg, SCALED_DISTANCE_M_PER_CBRT_KG, 1000.0)
     by_blast: float = scaled_distance_m_per_cbrt_kg * (2.0 * tnt_equivalent_kg(energy_j)) ** (1.0 / 3.0)
     if energy_j <= _SMALL_ENERGY_J:
         return max(_SMALL_DISTANCE_M, by_blast)

@@ -146,9 +146,7 @@ def to_pressure_fast(start: GasState, pressure_pa: float) -> GasState:
     return _on_isobar(start.entropy_j_kg_k, pressure_pa, (LOWEST_TEMPERATURE_K, guess), HIGHEST_DENSITY_KG_M3)
 
 
-def _on_isobar(
-    entropy: float, pressure_pa: float, lowest_and_guess_k: tuple[float, float], densest: float
-) -> GasState:
+def _on_isobar(entropy: float, pressure_pa: float, lowest_and_guess_k: tuple[float, float], densest: float) -> GasState:
     density = 0.0
     reduced = entropy / GAS_CONSTANT_J_KG_K
 
@@ -221,9 +219,7 @@ def _deep_to_pressure(entropy: float, pressure_pa: float) -> GasState:
     if entropy >= both.vapour.entropy_j_kg_k:
         lowest = both.vapour.density_kg_m3
         return _on_isobar(entropy, pressure_pa, (both.temperature_k, LOWEST_TEMPERATURE_K), lowest)
-    fraction = (entropy - both.liquid.entropy_j_kg_k) / (
-        both.vapour.entropy_j_kg_k - both.liquid.entropy_j_kg_k
-    )
+    fraction = (entropy - both.liquid.entropy_j_kg_k) / (both.vapour.entropy_j_kg_k - both.liquid.entropy_j_kg_k)
     if fraction < 0.0:
         raise ValueError(_LIQUID)
     return _mixed(both, fraction)
@@ -260,9 +256,7 @@ def _single(density_kg_m3: float, temperature_k: float) -> GasState:
 
 def _check_hot_end(temperature_k: float) -> None:
     if temperature_k >= HIGHEST_TEMPERATURE_K * (1.0 - 1e-9):
-        raise ValueError(
-            f"the gas would be hotter than {HIGHEST_TEMPERATURE_K:.0f} K; the formula ends there"
-        )
+        raise ValueError(f"the gas would be hotter than {HIGHEST_TEMPERATURE_K:.0f} K; the formula ends there")
 
 
 _LIQUID: Final = "the nitrogen would become liquid; the formula is for gas, or gas that begins to condense"

@@ -174,9 +174,7 @@ def joined_bulk_modulus_pa(volumes_m3: Sequence[float], bulk_moduli_pa: Sequence
     Source: the same pressure in all parts, volumes added (Reuss's average).
     """
     if not volumes_m3 or len(volumes_m3) != len(bulk_moduli_pa):
-        raise ValueError(
-            f"{len(volumes_m3)} volumes and {len(bulk_moduli_pa)} bulk moduli; one each is needed"
-        )
+        raise ValueError(f"{len(volumes_m3)} volumes and {len(bulk_moduli_pa)} bulk moduli; one each is needed")
     yielding = 0.0
     for volume, modulus in zip(volumes_m3, bulk_moduli_pa, strict=True):
         check_range("volumes_m3", volume, 1e-12, 1e6)

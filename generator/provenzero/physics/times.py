@@ -60,9 +60,7 @@ class Duration:
     fast_m3: float
 
 
-def bleed_down(
-    charge: GasCharge, start_pag: float, end_pag: float, temperature_k: float, outlet: Outlet
-) -> Duration:
+def bleed_down(charge: GasCharge, start_pag: float, end_pag: float, temperature_k: float, outlet: Outlet) -> Duration:
     """Give volume and time of bleeding a bank down through a valve, to a pressure or until it is drained.
 
     Formula: t = integral of dV/Q(p(V) - pb), p(V) at constant temperature and at constant entropy.
@@ -160,9 +158,7 @@ def charging_time(
     return Duration(slow_s=slow / pump_flow_m3_s, fast_s=fast / pump_flow_m3_s, slow_m3=slow, fast_m3=fast)
 
 
-def decompression_time_s(
-    volume_m3: float, pressure_pag: float, bulk_modulus_pa: float, outlet: Outlet
-) -> float:
+def decompression_time_s(volume_m3: float, pressure_pag: float, bulk_modulus_pa: float, outlet: Outlet) -> float:
     """Give how long a trapped line needs to fall to the pressure behind its outlet.
 
     Formula: t = 2 V dp/(Be Q1), from dp/dt = -(Be/V) Q and Q growing as the square root of dp.

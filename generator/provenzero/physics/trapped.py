@@ -3,9 +3,7 @@
 from provenzero.physics.standard import check_range
 
 
-def pressure_rise_pa_k(
-    expansion_per_k: float, bulk_modulus_pa: float, wall_expansion_per_k: float = 0.0
-) -> float:
+def pressure_rise_pa_k(expansion_per_k: float, bulk_modulus_pa: float, wall_expansion_per_k: float = 0.0) -> float:
     """Give the pressure that a blocked-in line gains for each kelvin of warming.
 
     Formula: dp/dT = (af - av) Be; with Be from the liquid and the stretch of the pipe this is
@@ -50,9 +48,7 @@ def released_volume_m3(volume_m3: float, pressure_pag: float, bulk_modulus_pa: f
     return volume_m3 * pressure_pag / bulk_modulus_pa
 
 
-def leak_rate_m3_s(
-    volume_m3: float, bulk_modulus_pa: float, pressure_rise_pa: float, hold_time_s: float
-) -> float:
+def leak_rate_m3_s(volume_m3: float, bulk_modulus_pa: float, pressure_rise_pa: float, hold_time_s: float) -> float:
     """Give the leak into a closed line that a pressure rise in a hold time implies.
 
     Formula: q = (V/Be) dp/t.
@@ -76,9 +72,7 @@ def leak_rate_m3_s(
     return volume_m3 / bulk_modulus_pa * pressure_rise_pa / hold_time_s
 
 
-def hold_time_s(
-    volume_m3: float, bulk_modulus_pa: float, gauge_resolution_pa: float, leak_m3_s: float
-) -> float:
+def hold_time_s(volume_m3: float, bulk_modulus_pa: float, gauge_resolution_pa: float, leak_m3_s: float) -> float:
     """Give how long a closed line must be watched before a leak of a stated size can be seen.
 
     Formula: t = V dp/(Be q).

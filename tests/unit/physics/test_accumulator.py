@@ -43,9 +43,7 @@ def test_discharge_below_the_precharge_gives_no_more_than_was_in() -> None:
 
 
 def test_a_bottle_that_lost_its_precharge_fills_with_fluid() -> None:
-    assert nitrogen_mass_kg(FLAT) == pytest.approx(
-        0.0466, abs=2e-4
-    )  # 0.04 m3 of nitrogen at 1 atm and 20 degC
+    assert nitrogen_mass_kg(FLAT) == pytest.approx(0.0466, abs=2e-4)  # 0.04 m3 of nitrogen at 1 atm and 20 degC
     assert fluid_volume_m3(FLAT, 20 * MPA, WARM) > 0.0397
     assert gas_volume_m3(FLAT, 0.0, WARM) == pytest.approx(0.04, rel=1e-12)
 

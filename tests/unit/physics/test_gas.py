@@ -29,9 +29,7 @@ WARM = 293.15
         (1e7, math.nan, "temperature_k"),
     ],
 )
-def test_a_state_outside_the_range_is_refused_by_name(
-    pressure_pa: float, temperature_k: float, named: str
-) -> None:
+def test_a_state_outside_the_range_is_refused_by_name(pressure_pa: float, temperature_k: float, named: str) -> None:
     with pytest.raises(ValueError, match=f"{named} is .*; the formula holds from"):
         gas_density_kg_m3(pressure_pa, temperature_k)
 

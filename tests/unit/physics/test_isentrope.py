@@ -42,9 +42,7 @@ def test_cold_vapour_above_its_boiling_point_is_gas(pressure_pa: float) -> None:
     end = to_pressure_fast(warmer, pressure_pa)
     assert end.vapour_fraction == 1.0
     assert boiling.temperature_k < end.temperature_k < 131.0
-    assert to_density_fast(warmer, end.density_kg_m3).temperature_k == pytest.approx(
-        end.temperature_k, rel=1e-9
-    )
+    assert to_density_fast(warmer, end.density_kg_m3).temperature_k == pytest.approx(end.temperature_k, rel=1e-9)
 
 
 def test_what_becomes_liquid_or_solid_or_too_hot_is_refused() -> None:

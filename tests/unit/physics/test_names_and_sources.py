@@ -115,9 +115,7 @@ def test_every_public_field_that_is_a_number_names_its_unit(kind: type) -> None:
     text = inspect.getsource(kind)
     for field in dataclasses.fields(kind):
         if NUMBERS.search(annotation(field.type)) and unit_of(field.name) is None:
-            assert re.search(rf"^ +{field.name}\b.*\[-|^ +# .*\n +{field.name}: tuple", text, re.MULTILINE), (
-                field
-            )
+            assert re.search(rf"^ +{field.name}\b.*\[-|^ +# .*\n +{field.name}: tuple", text, re.MULTILINE), field
 
 
 def test_there_is_something_to_look_at() -> None:

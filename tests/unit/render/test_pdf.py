@@ -158,5 +158,8 @@ def test_a_file_of_the_machine_cannot_be_drawn_in(document: Document, svg: str) 
 
 def test_without_the_layout_library_the_error_says_what_to_do(monkeypatch: pytest.MonkeyPatch) -> None:
     monkeypatch.setitem(sys.modules, "weasyprint", None)
-    with pytest.raises(PdfUnavailableError, match=r"Pango.*HTML.*apt-get install libpango.*dnf install pango.*brew install pango.*Windows"):
+    with pytest.raises(
+        PdfUnavailableError,
+        match=r"Pango.*HTML.*apt-get install libpango.*dnf install pango.*brew install pango.*Windows",
+    ):
         pdf("<p>x</p>")
