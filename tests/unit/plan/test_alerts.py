@@ -6,7 +6,7 @@ The alert numbers and what went wrong are as summarised by that association (98-
 from tests.properties.planning import example, network_of, places, plan_of, unit_from
 from tests.unit.plan.changing import changed
 
-from provenzero.network.model import LineId
+from provenzero.network.model import DeviceTag, LineId
 from provenzero.plan.model import Plan, Section, StepKind
 from provenzero.proof.locked import locked
 from provenzero.proof.replay import BEFORE_WORK, replay
@@ -25,7 +25,7 @@ def test_98_16_the_nitrogen_side_of_a_bottle_is_a_source_of_its_own_and_is_let_o
     plan = _plan("land-rig", "replace-bottle-bladder", "BK-1/3")
     assert LineId("BK-1/3.gas") in plan.zone
     steps = [s.device for s in plan.steps if s.section is Section.RELEASE and s.device]
-    assert steps.index("BV-1") < steps.index("BK-1/3-gas")
+    assert steps.index(DeviceTag("BV-1")) < steps.index(DeviceTag("BK-1/3-gas"))
     drained_only = next(i for i, s in enumerate(plan.steps) if s.device == "BV-1")
     assert plan.states[drained_only + 1].high(LineId("BK-1/3.gas")) > 6e6
     assert plan.isolated().high(LineId("BK-1/3.gas")) == 0.0

@@ -90,7 +90,7 @@ def test_the_way_back_shuts_the_bleeds_first_and_gives_remote_control_back_last(
     plan = _plan("land-rig", "replace-bypass-valve", "BP-1")
     back = [s.device for s in plan.steps if s.section is Section.REINSTATE and s.device]
     opened = [s.device for s in plan.steps if s.section is Section.RELEASE and s.device and s.position == "open"]
-    bleeds = [d for d in opened if d is not None and d.startswith(("BV", "PB", "HB"))]
+    bleeds = [d for d in opened if d.startswith(("BV", "PB", "HB"))]
     assert bleeds
     assert all(back.index(b) < back.index(DeviceTag("Q-1")) for b in bleeds)
 
