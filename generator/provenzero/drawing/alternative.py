@@ -19,7 +19,10 @@ def alternative(scene: Scene, number: int, count: int, shown: Sequence[str]) -> 
     words, unit, marks = scene.wording, scene.unit, scene.marks
     parts = [
         words.alt_unit.format(
-            unit=unit.identity.tag, pumps=len(unit.pumps), banks=len(unit.banks), regulators=len(unit.regulators),
+            unit=unit.identity.tag,
+            pumps=len(unit.pumps),
+            banks=len(unit.banks),
+            regulators=len(unit.regulators),
             functions=len(unit.functions),
         )
     ]

@@ -73,8 +73,13 @@ def overview(unit: Unit, network: Network, marks: Marks, wording: Wording = ENGL
     The letters are 2.4 mm high or more; where that saves a sheet all is drawn a little smaller, with letters of 2.2 mm.
     """
     scene = Scene(
-        unit=unit, marks=marks, wording=wording, letters=letters_of(unit), devices=network.devices,
-        lines=network.lines, ports={(p.equipment, p.name): p.line for p in reversed(network.ports)},
+        unit=unit,
+        marks=marks,
+        wording=wording,
+        letters=letters_of(unit),
+        devices=network.devices,
+        lines=network.lines,
+        ports={(p.equipment, p.name): p.line for p in reversed(network.ports)},
     )
     sheets, paper = _sheets(scene)
     return tuple(_draw(scene, sheet, paper, number, len(sheets)) for number, sheet in enumerate(sheets, start=1))
@@ -258,8 +263,12 @@ def _draw(scene: Scene, sheet: _Sheet, paper: _Paper, number: int, count: int) -
     legend.draw(canvas, 0.0, foot, 0.0)
     shown = [name for column in columns for item in (*column.made, *column.spent) for name in item.block.names]
     return Drawing(
-        width_mm=round(width * paper.scale, 2), height_mm=round((foot + legend.height) * paper.scale, 2), scale=paper.scale,
-        title=title(scene, number, count), alt=alternative(scene, number, count, shown), groups=canvas.groups(),
+        width_mm=round(width * paper.scale, 2),
+        height_mm=round((foot + legend.height) * paper.scale, 2),
+        scale=paper.scale,
+        title=title(scene, number, count),
+        alt=alternative(scene, number, count, shown),
+        groups=canvas.groups(),
     )
 
 

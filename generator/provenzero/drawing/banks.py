@@ -61,8 +61,13 @@ def bank_block(scene: Scene, item: Bank, limit_mm: float, silent: frozenset[Line
         cells.append(_turned(valve))
     row = Row(scene, fluid, cells, limit_mm=limit_mm, silent=silent, from_first=True)
     return Block(
-        names=(item.tag,), width=row.width, up=row.up, down=row.down, right=(Tap(main, row.out),),
-        roomy=row.out == 0.0, draw=row.draw,
+        names=(item.tag,),
+        width=row.width,
+        up=row.up,
+        down=row.down,
+        right=(Tap(main, row.out),),
+        roomy=row.out == 0.0,
+        draw=row.draw,
     )
 
 
@@ -77,8 +82,15 @@ def header_block(scene: Scene, limit_mm: float, silent: frozenset[LineId]) -> Bl
 def _turned(cell: Cell) -> Cell:
     """The same cell met from its other side."""
     return Cell(
-        left=cell.left, right=cell.right, up=cell.up, down=cell.down, line_in=cell.line_out, line_out=cell.line_in,
-        body=cell.body, clear=cell.clear, paint=cell.paint,
+        left=cell.left,
+        right=cell.right,
+        up=cell.up,
+        down=cell.down,
+        line_in=cell.line_out,
+        line_out=cell.line_in,
+        body=cell.body,
+        clear=cell.clear,
+        paint=cell.paint,
     )
 
 
@@ -88,10 +100,15 @@ def _groups(scene: Scene, item: Bank) -> list[_Bottles]:
         key = f"{item.tag}/{number}"
         valve = item.bottle_valves[number - 1].tag if item.bottle_valves else None
         here = _Bottles(
-            number, number, scene.marks.role(LineId(f"{key}.gas")),
-            scene.marks.role(scene.port(key, "fluid") or LineId(item.attached_to)), scene.position(f"{key}-gas"),
-            "" if valve is None else scene.position(valve), scene.lock(f"{key}-gas"),
-            None if valve is None else scene.lock(valve), scene.vent(f"{key}-gas"),
+            number,
+            number,
+            scene.marks.role(LineId(f"{key}.gas")),
+            scene.marks.role(scene.port(key, "fluid") or LineId(item.attached_to)),
+            scene.position(f"{key}-gas"),
+            "" if valve is None else scene.position(valve),
+            scene.lock(f"{key}-gas"),
+            None if valve is None else scene.lock(valve),
+            scene.vent(f"{key}-gas"),
         )
         if found and _same(found[-1], here):
             here = _Bottles(
@@ -123,7 +140,10 @@ def _bottles_cell(scene: Scene, item: Bank, group: _Bottles, fluid: LineId) -> C
     beside = _beside(scene, group, LineId(f"{keys[0]}.gas"))
     told = scene.told(side) if valves else ""
     beneath = _BESIDE + label_width(told) if told else 0.0
-    left = max(words.width + BOTTLE_HALF, valve_words.width + 2.8 + (2 * LOCK_HALF + 1.4 if shut_locked else 0.0)) + 2 * ROOM
+    left = (
+        max(words.width + BOTTLE_HALF, valve_words.width + 2.8 + (2 * LOCK_HALF + 1.4 if shut_locked else 0.0))
+        + 2 * ROOM
+    )
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
         canvas.dot(fluid, (x, y))
@@ -153,8 +173,15 @@ def _bottles_cell(scene: Scene, item: Bank, group: _Bottles, fluid: LineId) -> C
         _beside_gas(canvas, scene, group, (body.right, nub - _NUB - 1.1), gas)
 
     return Cell(
-        left=left, right=max(BOTTLE_HALF, 0.9 + margin + beside, beneath) + ROOM, up=max(top + margin, top + 2.0 if beside else 0.0),
-        down=1.0, line_in=fluid, line_out=fluid, body=None, clear=0.0, paint=paint,
+        left=left,
+        right=max(BOTTLE_HALF, 0.9 + margin + beside, beneath) + ROOM,
+        up=max(top + margin, top + 2.0 if beside else 0.0),
+        down=1.0,
+        line_in=fluid,
+        line_out=fluid,
+        body=None,
+        clear=0.0,
+        paint=paint,
     )
 
 
@@ -199,7 +226,9 @@ def _beside_gas(canvas: Canvas, scene: Scene, group: _Bottles, at: tuple[float, 
         vent_mark(canvas, scene, group.vent, (x, y - 2.8), *names)
 
 
-def _beside_valve(canvas: Canvas, group: _Bottles, words: Tag, body: tuple[float, float, float, float], names: list[str]) -> None:
+def _beside_valve(
+    canvas: Canvas, group: _Bottles, words: Tag, body: tuple[float, float, float, float], names: list[str]
+) -> None:
     left, top, _, bottom = body
     middle = (top + bottom) / 2
     if group.lock is not None:
@@ -207,5 +236,3 @@ def _beside_valve(canvas: Canvas, group: _Bottles, words: Tag, body: tuple[float
         left -= 2 * half + 0.3
         lozenge(canvas, (left + half, middle), group.lock, *names)
     words.words(canvas, left - ROOM - words.width, middle - words.height / 2, *names)
-
-

@@ -57,8 +57,12 @@ def _pair(first: Block, second: Block, apart: float, gap: float) -> Block:
         second.draw(canvas, x + first.width + gap, y - rise, end)
 
     return Block(
-        names=(*first.names, *second.names), width=first.width + gap + second.width, up=max(first.up, second.up + rise),
-        down=first.down, right=(*first.right, *(Tap(tap.line, tap.offset - rise) for tap in second.right)), draw=draw,
+        names=(*first.names, *second.names),
+        width=first.width + gap + second.width,
+        up=max(first.up, second.up + rise),
+        down=first.down,
+        right=(*first.right, *(Tap(tap.line, tap.offset - rise) for tap in second.right)),
+        draw=draw,
     )
 
 
@@ -88,8 +92,13 @@ def _beside(block: Block, item: Block, width: float, gap: float) -> Block:
         item.draw(canvas, x + width - item.width, y - 2 * gap - item.down, end)
 
     return Block(
-        names=(*block.names, *item.names), width=width, up=max(block.up, item.height + 2 * gap), down=block.down, left=block.left,
-        right=block.right, draw=draw,
+        names=(*block.names, *item.names),
+        width=width,
+        up=max(block.up, item.height + 2 * gap),
+        down=block.down,
+        left=block.left,
+        right=block.right,
+        draw=draw,
     )
 
 
@@ -111,6 +120,9 @@ def _shelf(row: list[Block], gap: float) -> Block:
             x += block.width + gap
 
     return Block(
-        names=tuple(name for block in row for name in block.names), width=sum(b.width + gap for b in row) - gap,
-        up=max(b.up for b in row), down=max(b.down for b in row), draw=draw,
+        names=tuple(name for block in row for name in block.names),
+        width=sum(b.width + gap for b in row) - gap,
+        up=max(b.up for b in row),
+        down=max(b.down for b in row),
+        draw=draw,
     )

@@ -1,6 +1,7 @@
 """Collects what is drawn on one sheet: lines of the circuit, symbols, tags and marks, and puts them in drawing order."""
 
 from collections.abc import Iterable, Mapping
+from itertools import pairwise
 
 from provenzero.drawing.model import (
     Box,
@@ -24,6 +25,7 @@ DOT = 0.65
 BAND = 1.9
 CORE = 1.2
 _HATCH_STEP = 1.2
+_SAME_MM = 1e-6
 _ORDER = (Role.ZONE, Role.DEAD, Role.VENTED, Role.NEUTRAL, Role.UNKNOWN, Role.TRAPPED, Role.LIVE)
 _KINDS = (Kind.LINE, Kind.SYMBOL, Kind.MARK, Kind.TAG, Kind.LABEL, Kind.LEGEND)
 
@@ -42,7 +44,7 @@ class Canvas:
         """Draw a piece of a line of the circuit through the points, which lie straight above or beside each other."""
         kept = [points[0]]
         for point in points[1:]:
-            if abs(point[0] - kept[-1][0]) + abs(point[1] - kept[-1][1]) > 1e-6:
+            if abs(point[0] - kept[-1][0]) + abs(point[1] - kept[-1][1]) > _SAME_MM:
                 kept.append(point)
         if len(kept) > 1:
             self._wires.setdefault(line, []).append(tuple(kept))
@@ -105,7 +107,7 @@ def _hatch(points: tuple[Point, ...]) -> list[Shape]:
     """Slanted strokes across a band, within its core."""
     strokes: list[Shape] = []
     half = CORE / 2
-    for (x1, y1), (x2, y2) in zip(points, points[1:], strict=False):
+    for (x1, y1), (x2, y2) in pairwise(points):
         length = abs(x2 - x1) + abs(y2 - y1)
         ux, uy = (x2 - x1) / length, (y2 - y1) / length
         count = max(1, int((length - CORE) / _HATCH_STEP) + 1)

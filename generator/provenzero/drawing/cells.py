@@ -90,9 +90,7 @@ def symbol_of(scene: Scene, element: Inline) -> Symbol:
 
 def through(scene: Scene, element: Inline, *, lock_below: bool = False) -> Cell:
     """A cell of what the fluid goes through."""
-    return device_cell(
-        scene, element.tag, symbol_of(scene, element), *scene.ends(element.tag), lock_below=lock_below
-    )
+    return device_cell(scene, element.tag, symbol_of(scene, element), *scene.ends(element.tag), lock_below=lock_below)
 
 
 def device_cell(  # noqa: PLR0913 - a device is its tag, its symbol and its two lines
@@ -120,8 +118,15 @@ def device_cell(  # noqa: PLR0913 - a device is its tag, its symbol and its two 
             vent_mark(canvas, scene, where, (x - mark / 2, placed.top - up), name)
 
     return Cell(
-        left=left, right=right, up=up - body.top, down=body.bottom + (0.0 if low is None else CORNER + LOCK_HALF),
-        line_in=line_in, line_out=line_out, body=(symbol.body.left, symbol.body.right), clear=body.left - corner, paint=paint,
+        left=left,
+        right=right,
+        up=up - body.top,
+        down=body.bottom + (0.0 if low is None else CORNER + LOCK_HALF),
+        line_in=line_in,
+        line_out=line_out,
+        body=(symbol.body.left, symbol.body.right),
+        clear=body.left - corner,
+        paint=paint,
     )
 
 
@@ -133,7 +138,9 @@ def standing(scene: Scene, fitting: Fitting, line: LineId, *, below: bool = Fals
         case Bleed():
             return _branch(scene, [_shut(scene, fitting.valve)], line, LineId(fitting.to), below=below)
         case Relief():
-            return _branch(scene, [Part(fitting.tag, relief(), tag(fitting.tag))], line, LineId(fitting.to), below=below)
+            return _branch(
+                scene, [Part(fitting.tag, relief(), tag(fitting.tag))], line, LineId(fitting.to), below=below
+            )
 
 
 @dataclass(frozen=True, slots=True)
@@ -196,8 +203,15 @@ def _on_line(  # noqa: PLR0913 - a cell is its extents and its paint
     line: LineId, left: float, right: float, reach: float, *, below: bool, paint: Callable[[Canvas, float, float], None]
 ) -> Cell:
     return Cell(
-        left=left, right=right, up=1.0 if below else reach, down=reach if below else 1.0, line_in=line, line_out=line,
-        body=None, clear=0.0, paint=paint,
+        left=left,
+        right=right,
+        up=1.0 if below else reach,
+        down=reach if below else 1.0,
+        line_in=line,
+        line_out=line,
+        body=None,
+        clear=0.0,
+        paint=paint,
     )
 
 
@@ -245,8 +259,12 @@ def _branch(scene: Scene, parts: list[Part], line: LineId, to: LineId | None, *,
 
     extra = GAP + max(0.0 if where is None else VENT_HEIGHT, LABEL_HEIGHT if told else 0.0)
     return _on_line(
-        line, max(parts[0].left - places[0], 0.5) + ROOM, right, RISE + edge + (extra if width else 0.0),
-        below=below, paint=paint,
+        line,
+        max(parts[0].left - places[0], 0.5) + ROOM,
+        right,
+        RISE + edge + (extra if width else 0.0),
+        below=below,
+        paint=paint,
     )
 
 

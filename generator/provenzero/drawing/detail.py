@@ -29,8 +29,12 @@ def detail(unit: Unit, network: Network, device_tag: str, position: str, wording
         foot = _through(canvas, unit, device, position)
     _positions(canvas, device, position, foot)
     return Drawing(
-        width_mm=_WIDTH, height_mm=foot + _POSITION_HEIGHT + 0.4, scale=1.0, title=f"{device_tag} {_words(position)}",
-        alt=_alternative(network, device, position, wording), groups=canvas.groups(),
+        width_mm=_WIDTH,
+        height_mm=foot + _POSITION_HEIGHT + 0.4,
+        scale=1.0,
+        title=f"{device_tag} {_words(position)}",
+        alt=_alternative(network, device, position, wording),
+        groups=canvas.groups(),
     )
 
 
@@ -49,14 +53,17 @@ def _handle(canvas: Canvas, unit: Unit, tag: str, position: str, wording: Wordin
     port, other = middle + PORT_LEFT, middle + PORT_RIGHT
     vents = centre is Centre.VENTS
     pens = {
-        "open": (Pen.LIVE, Pen.DEAD), "close": (Pen.DEAD, Pen.LIVE),
+        "open": (Pen.LIVE, Pen.DEAD),
+        "close": (Pen.DEAD, Pen.LIVE),
         "centre": (Pen.DEAD, Pen.DEAD) if vents else (Pen.NEUTRAL, Pen.NEUTRAL),
     }[position]
     shapes = [
         Polyline(points=((port, top), (port, 3.4), (port - 4.0, 3.4)), pen=pens[0]),
         Polyline(points=((other, top), (other, 3.4), (other + 4.0, 3.4)), pen=pens[1]),
         Polyline(points=((port, top + SIDE), (port, top + SIDE + 2.4), (port - 4.0, top + SIDE + 2.4)), pen=Pen.LIVE),
-        Polyline(points=((other, top + SIDE), (other, top + SIDE + 2.4), (other + 4.0, top + SIDE + 2.4)), pen=Pen.DEAD),
+        Polyline(
+            points=((other, top + SIDE), (other, top + SIDE + 2.4), (other + 4.0, top + SIDE + 2.4)), pen=Pen.DEAD
+        ),
     ]
     canvas.add(Kind.MARK, shapes, tag)
     low, high = top + SIDE + 3.3, 4.3
@@ -80,7 +87,10 @@ def _through(canvas: Canvas, unit: Unit, device: Device, position: str) -> float
     if position in _PASSES:
         after = arrow((right, height), (stop, height), head=2.0)
     else:
-        after = (stroke((right, height), (stop, height)), stroke((stop, height - 1.6), (stop, height + 1.6), pen=Pen.HEAVY))
+        after = (
+            stroke((right, height), (stop, height)),
+            stroke((stop, height - 1.6), (stop, height + 1.6), pen=Pen.HEAVY),
+        )
     canvas.add(Kind.MARK, (stroke((left - _REACH, height), (left, height)), *after), device.tag)
     return height + symbol.body.bottom + 1.4
 

@@ -61,7 +61,9 @@ def feed(scene: Scene, words: str, load: LineId, device: Valve | Isolator | None
     return Feed(
         width=max(wide + left, part.left + mark) + right,
         up=max(part.words.reach - part.body.top, tall + (VENT_HEIGHT + GAP if mark else 0.0)),
-        down=max(part.body.bottom, LABEL_HEIGHT / 2, tall), near=part.words.reach - part.body.top, draw=draw,
+        down=max(part.body.bottom, LABEL_HEIGHT / 2, tall),
+        near=part.words.reach - part.body.top,
+        draw=draw,
     )
 
 

@@ -39,7 +39,8 @@ def square(centre: Centre, name: str, in_force: bool) -> tuple[Shape, ...]:
     if centre is Centre.UNKNOWN:
         return frame, *stop, words((SIDE / 2, 3.4), "?", size_mm=3.2)
     join = (
-        stroke((left, top), (left, 2.4), (right, 2.4)), stroke((right, top), (right, bottom)),
+        stroke((left, top), (left, 2.4), (right, 2.4)),
+        stroke((right, top), (right, bottom)),
         Circle(centre=(right, 2.4), radius=0.4, pen=Pen.SYMBOL, fill=Fill.INK),
     )
     return frame, *stop, *join
@@ -68,6 +69,7 @@ def _stop(x: float, y: float, into: int) -> tuple[Shape, ...]:
 def _lever() -> tuple[Shape, ...]:
     middle = SIDE / 2
     return (
-        stroke((0, middle), (-1.6, middle)), stroke((-1.6, middle + 1.0), (-3.6, middle - 1.6)),
+        stroke((0, middle), (-1.6, middle)),
+        stroke((-1.6, middle + 1.0), (-3.6, middle - 1.6)),
         Circle(centre=(-3.8, middle - 1.9), radius=0.6, pen=Pen.SYMBOL, fill=Fill.INK),
     )

@@ -95,7 +95,9 @@ def plan_of(scene: Scene, item: Function, limits: Limits) -> FunctionPlan:
     return plan
 
 
-def _measure(scene: Scene, item: Function, limits: Limits, *, under: bool) -> FunctionPlan:
+def _measure(  # noqa: PLR0915 - one long row of measures
+    scene: Scene, item: Function, limits: Limits, *, under: bool
+) -> FunctionPlan:
     open_line, close_line = LineId(f"{item.name}.open"), LineId(f"{item.name}.close")
     feed, tank = LineId(item.fed_from), scene.port(item.name, "return") or LineId("")
     head = title(scene, item)
@@ -106,7 +108,11 @@ def _measure(scene: Scene, item: Function, limits: Limits, *, under: bool) -> Fu
         word_at = max(_TANK_BOTTOM, VALVE_TOP + end.down) + 0.4
         tank_bottom = word_at + LABEL_HEIGHT
     row = Row(
-        scene, feed, elements(scene, item.valve.supply, feed), limit_mm=limits.width, silent=limits.silent,
+        scene,
+        feed,
+        elements(scene, item.valve.supply, feed),
+        limit_mm=limits.width,
+        silent=limits.silent,
         run_out=0.0 if under else LEVER + SIDE + PORT_LEFT,
     )
     told_supply = bool(row.ends[1:]) and bool(scene.told(row.last)) and row.last not in limits.silent
@@ -145,7 +151,8 @@ def _measure(scene: Scene, item: Function, limits: Limits, *, under: bool) -> Fu
     if where is not None:
         things.append(_Thing(vent[0] + vent_width(scene, where), vent[1], vent[1] + VENT_HEIGHT))
     floor = max(
-        returns + 0.9 if scene.unit.common_returns else tank_bottom + 0.4, row_at + row.down,
+        returns + 0.9 if scene.unit.common_returns else tank_bottom + 0.4,
+        row_at + row.down,
         *(thing.bottom for thing in things),
     )
     surge, at, bottom = _surge(scene, item, limits.silent, max([at, *(t.right for t in things)]), floor)
@@ -156,8 +163,23 @@ def _measure(scene: Scene, item: Function, limits: Limits, *, under: bool) -> Fu
     left, top, name = _name(item.label, things, wide)
     room = max([1.0, row.up - row_at, *(cell.up for cell, _ in above)])
     return FunctionPlan(
-        row=row, row_at=row_at, turn=turn, supply=supply, valve=valve, movers=end, mover=mover, above=above, below=below,
-        surge=surge, cylinder=reach, returns=returns, vent=vent, word_at=word_at, name=name, name_at=(left, top), width=wide,
+        row=row,
+        row_at=row_at,
+        turn=turn,
+        supply=supply,
+        valve=valve,
+        movers=end,
+        mover=mover,
+        above=above,
+        below=below,
+        surge=surge,
+        cylinder=reach,
+        returns=returns,
+        vent=vent,
+        word_at=word_at,
+        name=name,
+        name_at=(left, top),
+        width=wide,
         up=max(room, 1.8) if scene.told(open_line) else room,
         down=max(bottom, top + (len(name) - 1) * NAME_PITCH + _NAME_LINE),
     )

@@ -32,14 +32,14 @@ def legend_block(scene: Scene, width: float, sheet: str, ringed: Sequence[LineId
     def draw(canvas: Canvas, x: float, y: float, _: float) -> None:
         shapes: list[Shape] = [box(x + 0.2, y + 0.2, x + width - 0.2, y + height - 0.2, fill=Fill.NONE, pen=Pen.FINE)]
         if sheet:
-            shapes.append(Text(at=(x + width - _PAD, y + 3.4), words=sheet, size_mm=_SIZE, anchor=Anchor.END, bold=True))
+            shapes.append(
+                Text(at=(x + width - _PAD, y + 3.4), words=sheet, size_mm=_SIZE, anchor=Anchor.END, bold=True)
+            )
         step = (width - 2 * _PAD) / columns
         for number, (sample, text) in enumerate(entries):
             left, middle = x + _PAD + (number // rows) * step, y + _PAD + head + (number % rows + 0.5) * _ROW
             shapes += [moved(shape, left + _SAMPLE / 2, middle) for shape in sample]
-            shapes.append(
-                Text(at=(left + _SAMPLE + 1.2, middle + 0.9), words=text, size_mm=_SIZE, anchor=Anchor.START)
-            )
+            shapes.append(Text(at=(left + _SAMPLE + 1.2, middle + 0.9), words=text, size_mm=_SIZE, anchor=Anchor.START))
         canvas.add(Kind.LEGEND, shapes)
 
     return Block(names=(), width=width, up=0.0, down=height, draw=draw)
@@ -51,8 +51,11 @@ def _entries(scene: Scene, ringed: Sequence[LineId]) -> list[tuple[tuple[Shape, 
     found = set(marks.lines.values())
     half = _SAMPLE / 2 - 0.4
     lines = (
-        (Role.LIVE, "", text.legend_live), (Role.ZONE, text.opened, text.legend_zone), (Role.DEAD, "", text.legend_dead),
-        (Role.TRAPPED, text.trapped, text.legend_trapped), (Role.UNKNOWN, text.unknown, text.legend_unknown),
+        (Role.LIVE, "", text.legend_live),
+        (Role.ZONE, text.opened, text.legend_zone),
+        (Role.DEAD, "", text.legend_dead),
+        (Role.TRAPPED, text.trapped, text.legend_trapped),
+        (Role.UNKNOWN, text.unknown, text.legend_unknown),
     )
     entries: list[tuple[tuple[Shape, ...], str]] = []
     for role, word, meaning in lines:

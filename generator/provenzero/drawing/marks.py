@@ -62,9 +62,7 @@ def marks_of(plan: Plan) -> Marks:
     )
 
 
-def _role(
-    network: Network, state: State, line: LineId, zone: frozenset[LineId], dead: frozenset[LineId]
-) -> Role:
+def _role(network: Network, state: State, line: LineId, zone: frozenset[LineId], dead: frozenset[LineId]) -> Role:
     if line in zone:
         return Role.ZONE
     low, high = state.pressures[line]

@@ -136,9 +136,7 @@ def _gathered(scene: Scene, name: str, half: float, *, exhausts: bool) -> Symbol
     plain = shut_off(scene.position(DeviceTag(name)) == "open", exhausts)
     edge = plain.body.right + 1.0
     bar = (stroke((plain.body.right, 0), (edge, 0)), stroke((edge, -half), (edge, half)))
-    return Symbol(
-        shapes=(*plain.shapes, *bar), body=Box(plain.body.left, -half, edge, max(half, plain.body.bottom))
-    )
+    return Symbol(shapes=(*plain.shapes, *bar), body=Box(plain.body.left, -half, edge, max(half, plain.body.bottom)))
 
 
 def _powered(scene: Scene, panels: list[Panel]) -> Movers:

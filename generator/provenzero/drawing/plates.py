@@ -36,7 +36,9 @@ def _flag_size(words: str) -> tuple[float, float, tuple[str, ...]]:
 def _flag(lines: tuple[str, ...], outline: tuple[Point, ...], left: float, body: Box) -> Symbol:
     middle = left + max(width_mm(line, TAG_MM) for line in lines) / 2
     top = -(len(lines) - 1) * _FLAG_PITCH / 2 + 0.95
-    texts = [Text(at=(middle, top + place * _FLAG_PITCH), words=line, size_mm=TAG_MM) for place, line in enumerate(lines)]
+    texts = [
+        Text(at=(middle, top + place * _FLAG_PITCH), words=line, size_mm=TAG_MM) for place, line in enumerate(lines)
+    ]
     return Symbol(shapes=(Polygon(points=outline, pen=Pen.SYMBOL, fill=Fill.PAPER), *texts), body=body)
 
 
@@ -49,7 +51,8 @@ def plate(words: str, limit_mm: float, *, bold: bool = False, half_mm: float = 0
     frame = Rect(at=(0.0, -half), width=width, height=2 * half, pen=Pen.SYMBOL, fill=Fill.PAPER, round_mm=0.6)
     top = -tall / 2 + 0.35 + 2.2
     texts = [
-        Text(at=(width / 2, top + place * PITCH), words=line, size_mm=TAG_MM, bold=bold) for place, line in enumerate(lines)
+        Text(at=(width / 2, top + place * PITCH), words=line, size_mm=TAG_MM, bold=bold)
+        for place, line in enumerate(lines)
     ]
     return Symbol(shapes=(frame, *texts), body=Box(0.0, -half, width, half))
 
@@ -61,9 +64,7 @@ def named(scene: Scene, line: LineId) -> Cell:
     def paint(canvas: Canvas, x: float, y: float) -> None:
         name_over(canvas, scene, line, x + wide / 2, y)
 
-    return Cell(
-        left=0.0, right=wide, up=4.6, down=1.8, line_in=line, line_out=line, body=None, clear=0.0, paint=paint
-    )
+    return Cell(left=0.0, right=wide, up=4.6, down=1.8, line_in=line, line_out=line, body=None, clear=0.0, paint=paint)
 
 
 def name_width(scene: Scene, line: LineId) -> float:

@@ -28,14 +28,17 @@ def pump_block(scene: Scene, item: Pump, limit_mm: float, silent: frozenset[Line
     cells += elements(scene, rest, discharge, lock_below=True)
     row = Row(scene, LIQUID, cells, limit_mm=limit_mm, silent=silent)
     return Block(
-        names=(item.tag,), width=row.width, up=row.up, down=row.down, left=(Tap(LIQUID),),
-        right=(Tap(LineId(item.delivers_to), row.out),), draw=row.draw,
+        names=(item.tag,),
+        width=row.width,
+        up=row.up,
+        down=row.down,
+        left=(Tap(LIQUID),),
+        right=(Tap(LineId(item.delivers_to), row.out),),
+        draw=row.draw,
     )
 
 
-def elements(
-    scene: Scene, run: tuple[Element, ...], start: LineId, *, lock_below: bool = False
-) -> list[Cell]:
+def elements(scene: Scene, run: tuple[Element, ...], start: LineId, *, lock_below: bool = False) -> list[Cell]:
     """The cells of a run: what the fluid goes through, and what stands on the line where it has come to."""
     cells: list[Cell] = []
     here = start
@@ -61,7 +64,9 @@ def _pump_cell(scene: Scene, item: Pump, suction: LineId, discharge: LineId, bef
     rise, left = PUMP_RADIUS + _SHAFT + DRIVE_RADIUS, half
     if energy is not None:
         left = max(half, energy.width + DRIVE_RADIUS + ROOM - sum(cell.left + cell.right for cell in before))
-        rise = max(rise, max((cell.down for cell in before), default=0.0) + energy.up + 0.5, PUMP_RADIUS + energy.near + 0.2)
+        rise = max(
+            rise, max((cell.down for cell in before), default=0.0) + energy.up + 0.5, PUMP_RADIUS + energy.near + 0.2
+        )
 
     def paint(canvas: Canvas, x: float, y: float) -> None:
         body = canvas.symbol(pump(), (x, y), item.tag)
@@ -72,9 +77,15 @@ def _pump_cell(scene: Scene, item: Pump, suction: LineId, discharge: LineId, bef
             energy.draw(canvas, x - DRIVE_RADIUS, y + rise)
 
     return Cell(
-        left=left, right=half, up=PUMP_RADIUS + words.reach,
-        down=rise + max(DRIVE_RADIUS, 0.0 if energy is None else energy.down), line_in=suction, line_out=discharge,
-        body=(-PUMP_RADIUS, PUMP_RADIUS), clear=-PUMP_RADIUS, paint=paint,
+        left=left,
+        right=half,
+        up=PUMP_RADIUS + words.reach,
+        down=rise + max(DRIVE_RADIUS, 0.0 if energy is None else energy.down),
+        line_in=suction,
+        line_out=discharge,
+        body=(-PUMP_RADIUS, PUMP_RADIUS),
+        clear=-PUMP_RADIUS,
+        paint=paint,
     )
 
 

@@ -25,7 +25,11 @@ def regulator_block(
 ) -> Block:
     """One regulator, its name on the limb that goes back to the line it serves, and the bypasses that join that limb."""
     feed, serves = LineId(item.fed_from), LineId(item.serves)
-    cells = [*elements(scene, item.upstream, feed), _regulator_cell(scene, item), *fittings(scene, item.fittings, serves)]
+    cells = [
+        *elements(scene, item.upstream, feed),
+        _regulator_cell(scene, item),
+        *fittings(scene, item.fittings, serves),
+    ]
     row = Row(scene, feed, cells, limit_mm=limit_mm, silent=silent)
     rows = [Row(scene, LineId(n.from_line), [through(scene, n.valve)], limit_mm=limit_mm, silent=silent) for n in links]
     join = max((link.width for link in rows), default=0.0) + 1.0
@@ -54,8 +58,12 @@ def regulator_block(
     taps = [Tap(feed), Tap(serves, limb)]
     taps += [Tap(LineId(link.from_line), height) for link, height in zip(links, heights, strict=True)]
     return Block(
-        names=(item.tag, *(link.valve.tag for link in links)), width=right + 1.0, up=row.up,
-        down=max(limb + (_NAME_HALF if told else 1.1), foot), left=tuple(taps), draw=draw,
+        names=(item.tag, *(link.valve.tag for link in links)),
+        width=right + 1.0,
+        up=row.up,
+        down=max(limb + (_NAME_HALF if told else 1.1), foot),
+        left=tuple(taps),
+        draw=draw,
     )
 
 
@@ -70,7 +78,12 @@ def bypass_block(scene: Scene, item: Bypass, limit_mm: float, silent: frozenset[
         canvas.wire(end, (x + right, y), (x + right, y + limb), (x, y + limb))
 
     return Block(
-        names=(item.valve.tag,), width=right + 1.0, up=row.up, down=limb + 1.0, left=(Tap(start), Tap(end, limb)), draw=draw
+        names=(item.valve.tag,),
+        width=right + 1.0,
+        up=row.up,
+        down=limb + 1.0,
+        left=(Tap(start), Tap(end, limb)),
+        draw=draw,
     )
 
 
@@ -113,10 +126,15 @@ def _regulator_cell(scene: Scene, item: Regulator) -> Cell:
                 label(canvas, scene, tank, (x - 2.8 + word / 2, placed.bottom + drop + 0.4 + LABEL_HEIGHT / 2))
 
     return Cell(
-        left=max(4.6, words.width / 2, corner - body.left, _RING / 2 - ring_x if ringed else 0.0), right=max(6.2, words_left + words.width + ROOM, air.body.right / 2, word - 2.8 + ROOM),
-        up=max(up, 0.0 if lock is None else LOCK_HALF - body.top), down=max(down, body.bottom + words.reach),
-        line_in=inlet, line_out=LineId(item.serves), body=(symbol.body.left, symbol.body.right),
-        clear=body.left - corner, paint=paint,
+        left=max(4.6, words.width / 2, corner - body.left, _RING / 2 - ring_x if ringed else 0.0),
+        right=max(6.2, words_left + words.width + ROOM, air.body.right / 2, word - 2.8 + ROOM),
+        up=max(up, 0.0 if lock is None else LOCK_HALF - body.top),
+        down=max(down, body.bottom + words.reach),
+        line_in=inlet,
+        line_out=LineId(item.serves),
+        body=(symbol.body.left, symbol.body.right),
+        clear=body.left - corner,
+        paint=paint,
     )
 
 

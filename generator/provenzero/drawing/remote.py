@@ -42,7 +42,12 @@ def air_block(scene: Scene, item: AirSupply, limit_mm: float, silent: frozenset[
 
     width = lead + LEAD + row.width + after + goes.body.right
     return Block(
-        names=("air",), width=width, up=max(row.up, 2.0), down=max(row.down, row.out + 2.0), roomy=row.out == 0.0, draw=draw
+        names=("air",),
+        width=width,
+        up=max(row.up, 2.0),
+        down=max(row.down, row.out + 2.0),
+        roomy=row.out == 0.0,
+        draw=draw,
     )
 
 
@@ -85,8 +90,13 @@ def backup_block(scene: Scene, item: NitrogenBackup, limit_mm: float, silent: fr
         cells.append(_joint(piping, gas, target))
     row = Row(scene, gas, cells, limit_mm=limit_mm, silent=silent, from_first=True)
     return Block(
-        names=(item.tag,), width=row.width, up=row.up, down=row.down, right=(Tap(target, row.out),),
-        roomy=row.out == 0.0, draw=row.draw,
+        names=(item.tag,),
+        width=row.width,
+        up=row.up,
+        down=row.down,
+        right=(Tap(target, row.out),),
+        roomy=row.out == 0.0,
+        draw=row.draw,
     )
 
 
@@ -100,8 +110,15 @@ def _gas_cell(scene: Scene, item: NitrogenBackup, gas: LineId) -> Cell:
         words.words(canvas, x + symbol.body.left - ROOM - words.width, y - _STEM - 6.0, item.tag)
 
     return Cell(
-        left=words.width - symbol.body.left + 2 * ROOM, right=symbol.body.right + ROOM, up=_STEM - symbol.body.top, down=1.0,
-        line_in=gas, line_out=gas, body=None, clear=0.0, paint=paint,
+        left=words.width - symbol.body.left + 2 * ROOM,
+        right=symbol.body.right + ROOM,
+        up=_STEM - symbol.body.top,
+        down=1.0,
+        line_in=gas,
+        line_out=gas,
+        body=None,
+        clear=0.0,
+        paint=paint,
     )
 
 
@@ -112,6 +129,13 @@ def _joint(name: str, start: LineId, end: LineId) -> Cell:
         canvas.symbol(symbol, (x, y), name)
 
     return Cell(
-        left=2.0, right=2.0, up=1.2, down=1.2, line_in=start, line_out=end, body=(symbol.body.left, symbol.body.right),
-        clear=symbol.body.left, paint=paint,
+        left=2.0,
+        right=2.0,
+        up=1.2,
+        down=1.2,
+        line_in=start,
+        line_out=end,
+        body=(symbol.body.left, symbol.body.right),
+        clear=symbol.body.left,
+        paint=paint,
     )

@@ -54,7 +54,13 @@ def reservoir_block(scene: Scene, item: Reservoir, width: float, silent: frozens
     down = max(_DEEP, 0.0 if drain is None else _OUTLET + drain.down, 0.0 if drain is None else _OUTLET + 3.8)
     taps = (Tap(returns, limb_at),) if scene.unit.common_returns else ()
     return Block(
-        names=(item.tag,), width=right + beside, up=2.8 - limb_at + (1.2 if scene.told(returns) else 0.0), down=down + 0.4, left=(Tap(LIQUID, _OUTLET),), right=taps, draw=draw
+        names=(item.tag,),
+        width=right + beside,
+        up=2.8 - limb_at + (1.2 if scene.told(returns) else 0.0),
+        down=down + 0.4,
+        left=(Tap(LIQUID, _OUTLET),),
+        right=taps,
+        draw=draw,
     )
 
 
@@ -68,8 +74,10 @@ def _drain(scene: Scene, item: Reservoir, silent: frozenset[LineId]) -> Row | No
 def _tank(item: Reservoir, width: float) -> Symbol:
     """The tank with its tag; the words on its gas space and on its fluid stand inside."""
     shapes: list[Shape] = [
-        box(0, 0, width, _DEEP, pen=Pen.NONE), stroke((0, 0), (0, _DEEP), (width, _DEEP), (width, 0), pen=Pen.HEAVY),
-        box(0.4, 2.6, width - 0.4, _DEEP - 0.4, fill=Fill.TINT, pen=Pen.NONE), stroke((0.3, 2.6), (width - 0.3, 2.6), pen=Pen.FINE),
+        box(0, 0, width, _DEEP, pen=Pen.NONE),
+        stroke((0, 0), (0, _DEEP), (width, _DEEP), (width, 0), pen=Pen.HEAVY),
+        box(0.4, 2.6, width - 0.4, _DEEP - 0.4, fill=Fill.TINT, pen=Pen.NONE),
+        stroke((0.3, 2.6), (width - 0.3, 2.6), pen=Pen.FINE),
         Text(at=(width - 1.5, 6.0), words=item.tag, size_mm=TAG_MM, anchor=Anchor.END, bold=True),
     ]
     return Symbol(shapes=tuple(shapes), body=Box(0, 0, width, _DEEP))

@@ -54,12 +54,15 @@ def stacked(blocks: Sequence[Block], x: float, top: float, gap: float) -> list[P
     return placed
 
 
-def raised(
+def raised(  # noqa: PLR0913, PLR0917 - a route is its ends and what it must clear
     blocks: Sequence[Block], x: float, bottom: float, gap: float, right: Sequence[Placed], way: Corridor
 ) -> list[Placed]:
     """Blocks one over the other from the foot, each so high that no line of it runs on a line of the right column."""
     taken = [
-        (item.y + tap.offset, way.at[tap.line], tap.line) for item in right for tap in item.block.left if tap.line in way.at
+        (item.y + tap.offset, way.at[tap.line], tap.line)
+        for item in right
+        for tap in item.block.left
+        if tap.line in way.at
     ]
     placed: list[Placed] = []
     for block in blocks:
@@ -80,8 +83,13 @@ def _clashes(block: Block, y: float, taken: Sequence[tuple[float, float, LineId]
     )
 
 
-def draw_corridor(
-    canvas: Canvas, scene: Scene, way: Corridor, left: Sequence[Placed], right: Sequence[Placed], ringed: frozenset[LineId]
+def draw_corridor(  # noqa: PLR0913, PLR0917 - as above
+    canvas: Canvas,
+    scene: Scene,
+    way: Corridor,
+    left: Sequence[Placed],
+    right: Sequence[Placed],
+    ringed: frozenset[LineId],
 ) -> None:
     """Draw the shared lines and their taps; a line that goes on elsewhere ends in a ring at the top."""
     for line, x in way.at.items():
@@ -99,7 +107,7 @@ def draw_corridor(
         vertical(canvas, scene, line, x, heights, ring_at=_RING_AT if line in ringed else None)
 
 
-def vertical(
+def vertical(  # noqa: PLR0913 - as above
     canvas: Canvas, scene: Scene, line: LineId, x: float, heights: Sequence[float], *, ring_at: float | None
 ) -> None:
     """Draw a shared line up and down, with a dot where it is tapped between its ends."""

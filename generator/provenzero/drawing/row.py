@@ -39,8 +39,15 @@ class Row:
     """
 
     def __init__(  # noqa: PLR0913 - a row is its cells and its two ends
-        self, scene: Scene, first: LineId, cells: list[Cell], *, limit_mm: float, silent: frozenset[LineId],
-        from_first: bool = False, run_out: float = 0.0,
+        self,
+        scene: Scene,
+        first: LineId,
+        cells: list[Cell],
+        *,
+        limit_mm: float,
+        silent: frozenset[LineId],
+        from_first: bool = False,
+        run_out: float = 0.0,
     ) -> None:
         self._scene = scene
         self._first = first

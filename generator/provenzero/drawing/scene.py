@@ -61,7 +61,9 @@ class Scene:
     def name(self, line: LineId) -> str:
         """The name of a bus as it stands on the drawing."""
         fixed = {
-            LineId(HEADER): self.wording.header, LineId(RETURNS): self.wording.returns, LIQUID: self.wording.suction,
+            LineId(HEADER): self.wording.header,
+            LineId(RETURNS): self.wording.returns,
+            LIQUID: self.wording.suction,
             AIR: self.wording.air,
         }
         words = fixed.get(line)

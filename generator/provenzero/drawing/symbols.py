@@ -58,7 +58,9 @@ def words(at: Point, text: str, *, size_mm: float = LETTER_MM, anchor: Anchor = 
     return Text(at=at, words=text, size_mm=size_mm, anchor=anchor, bold=True)
 
 
-def box(left: float, top: float, right: float, bottom: float, *, fill: Fill = Fill.PAPER, pen: Pen = Pen.SYMBOL) -> Rect:
+def box(  # noqa: PLR0913 - a rectangle and its strokes
+    left: float, top: float, right: float, bottom: float, *, fill: Fill = Fill.PAPER, pen: Pen = Pen.SYMBOL
+) -> Rect:
     """A rectangle of a symbol by its sides."""
     return Rect(at=(left, top), width=right - left, height=bottom - top, pen=pen, fill=fill)
 
@@ -154,7 +156,10 @@ def reducer() -> Symbol:
     """A fixed reducing valve: a small regulator without adjustment."""
     w = 2.2
     shapes = (
-        box(-w, -w, w, w), *arrow((-w, 0), (w, 0)), stroke((w, 0), (3.4, 0)), *_spring((0, -w), -1.8),
+        box(-w, -w, w, w),
+        *arrow((-w, 0), (w, 0)),
+        stroke((w, 0), (3.4, 0)),
+        *_spring((0, -w), -1.8),
         stroke((2.9, 0), (2.9, 3.2), (0.6, 3.2), (0.6, w), pen=Pen.PILOT),
     )
     return Symbol(shapes=shapes, body=Box(-w, -w - 1.8, 3.4, 3.4))
@@ -165,8 +170,11 @@ def relief() -> Symbol:
     """A relief valve: the arrow aside of the ports, opened by the dashed pilot from its inlet against the spring."""
     w = 2.3
     shapes = (
-        stroke((-3.4, 0), (-w, 0)), box(-w, -w, w, w), *arrow((-w, -0.9), (w, -0.9), head=0.9),
-        stroke((-2.9, 0), (-2.9, -3.0), (0, -3.0), (0, -w), pen=Pen.PILOT), *_spring((0, w), 1.8),
+        stroke((-3.4, 0), (-w, 0)),
+        box(-w, -w, w, w),
+        *arrow((-w, -0.9), (w, -0.9), head=0.9),
+        stroke((-2.9, 0), (-2.9, -3.0), (0, -3.0), (0, -w), pen=Pen.PILOT),
+        *_spring((0, w), 1.8),
     )
     return Symbol(shapes=shapes, body=Box(-3.4, -3.2, w, w + 1.8))
 
@@ -243,7 +251,10 @@ def breather() -> Symbol:
 @cache
 def ring(letter: str) -> Symbol:
     """A letter in a ring: the line goes on where the same letter stands."""
-    shapes = (Circle(centre=(0, 0), radius=RING_RADIUS, pen=Pen.SYMBOL, fill=Fill.PAPER), words((0, 0.88), letter, size_mm=2.4))
+    shapes = (
+        Circle(centre=(0, 0), radius=RING_RADIUS, pen=Pen.SYMBOL, fill=Fill.PAPER),
+        words((0, 0.88), letter, size_mm=2.4),
+    )
     return Symbol(shapes=shapes, body=Box(-RING_RADIUS, -RING_RADIUS, RING_RADIUS, RING_RADIUS))
 
 
@@ -259,7 +270,10 @@ def isolator(on: bool) -> Symbol:
     """An electric isolator: the blade closed or lifted, with the bar of a switch that isolates."""
     blade = stroke((-1.5, 0), (1.5, 0), pen=Pen.HEAVY) if on else stroke((-1.5, 0), (1.2, -1.7), pen=Pen.HEAVY)
     shapes = (
-        stroke((-VALVE_HALF, 0), (-1.5, 0)), blade, stroke((1.5, 0), (VALVE_HALF, 0)), stroke((1.5, -1.0), (1.5, 1.0)),
+        stroke((-VALVE_HALF, 0), (-1.5, 0)),
+        blade,
+        stroke((1.5, 0), (VALVE_HALF, 0)),
+        stroke((1.5, -1.0), (1.5, 1.0)),
         Circle(centre=(-1.5, 0), radius=0.4, pen=Pen.SYMBOL, fill=Fill.INK),
     )
     return Symbol(shapes=shapes, body=Box(-VALVE_HALF, -2.0, VALVE_HALF, 2.0))
@@ -270,7 +284,9 @@ def cylinder(piston: str) -> Symbol:
     """A double-acting cylinder from the corner of its closing end; ports on top; the rod comes out to close."""
     at = {"open": 2.2, "close": 6.2}.get(piston, 4.2)
     shapes = (
-        box(0, 0, CYLINDER_LONG, 5.6), box(at, 0, at + 1.4, 5.6, fill=Fill.TINT), box(at + 1.4, 2.3, at + 6.2, 3.3),
+        box(0, 0, CYLINDER_LONG, 5.6),
+        box(at, 0, at + 1.4, 5.6, fill=Fill.TINT),
+        box(at + 1.4, 2.3, at + 6.2, 3.3),
     )
     return Symbol(shapes=shapes, body=Box(0, 0, CYLINDER_LONG + 2.6, 5.6))
 
@@ -282,7 +298,9 @@ def arrow(start: Point, end: Point, head: float = 1.2) -> tuple[Shape, ...]:
     ux, uy = (x2 - x1) / length, (y2 - y1) / length
     bx, by = x2 - ux * head, y2 - uy * head
     half = head * 0.4
-    return stroke(start, (bx, by)), area(end, (bx - uy * half, by + ux * half), (bx + uy * half, by - ux * half), fill=Fill.INK)
+    return stroke(start, (bx, by)), area(
+        end, (bx - uy * half, by + ux * half), (bx + uy * half, by - ux * half), fill=Fill.INK
+    )
 
 
 def _spring(foot: Point, height: float) -> tuple[Shape, ...]:
@@ -294,7 +312,8 @@ def _spring(foot: Point, height: float) -> tuple[Shape, ...]:
 
 def _capsule(w: float, h: float) -> tuple[Shape, ...]:
     return (
-        stroke((-w, -w), (-w, w - h)), stroke((w, -w), (w, w - h)),
+        stroke((-w, -w), (-w, w - h)),
+        stroke((w, -w), (w, w - h)),
         Arc(start=(-w, w - h), end=(w, w - h), radius=w, pen=Pen.SYMBOL),
         Arc(start=(w, -w), end=(-w, -w), radius=w, pen=Pen.SYMBOL),
     )

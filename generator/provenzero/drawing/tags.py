@@ -98,9 +98,7 @@ def lozenge(canvas: Canvas, at: Point, number: int, *names: str) -> None:
     canvas.add(Kind.MARK, lozenge_shapes(at, str(number), lock_half(number)), *names, role=Role.ISOLATION)
 
 
-def lozenge_shapes(
-    at: Point, words: str, half: float = LOCK_HALF, tall: float = LOCK_HALF
-) -> tuple[Shape, ...]:
+def lozenge_shapes(at: Point, words: str, half: float = LOCK_HALF, tall: float = LOCK_HALF) -> tuple[Shape, ...]:
     """A filled lozenge with white letters."""
     x, y = at
     points = ((x - half, y), (x, y - tall), (x + half, y), (x, y + tall))
@@ -133,8 +131,11 @@ def word_shapes(words: str, role: Role, centre: Point) -> tuple[Shape, ...]:
     x, y = centre
     opened = role is Role.ZONE
     frame = Rect(
-        at=(x - width / 2, y - LABEL_HEIGHT / 2), width=width, height=LABEL_HEIGHT,
-        pen=Pen.PILOT if role is Role.UNKNOWN else Pen.SYMBOL, fill=Fill.INK if opened else Fill.PAPER,
+        at=(x - width / 2, y - LABEL_HEIGHT / 2),
+        width=width,
+        height=LABEL_HEIGHT,
+        pen=Pen.PILOT if role is Role.UNKNOWN else Pen.SYMBOL,
+        fill=Fill.INK if opened else Fill.PAPER,
     )
     ink = Fill.PAPER if opened else Fill.INK
     return frame, Text(at=(x, y + 0.87), words=words, size_mm=LABEL_MM, bold=True, ink=ink)
@@ -166,7 +167,13 @@ def down_arrow(top: Point, height: float) -> Polygon:
     x, y = top
     half, neck = _VENT_ARROW / 2, y + height - 2.4
     points = (
-        (x - 0.65, y), (x + 0.65, y), (x + 0.65, neck), (x + half, neck), (x, y + height), (x - half, neck), (x - 0.65, neck)
+        (x - 0.65, y),
+        (x + 0.65, y),
+        (x + 0.65, neck),
+        (x + half, neck),
+        (x, y + height),
+        (x - half, neck),
+        (x - 0.65, neck),
     )
     return Polygon(points=points, pen=Pen.NONE, fill=Fill.INK)
 

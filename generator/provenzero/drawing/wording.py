@@ -37,9 +37,7 @@ class Wording:
     legend_closed: str = "valve closed, open"
     legend_force: str = "valve position"
     legend_chambers: str = "closing, opening"
-    alt_unit: str = (
-        "Schematic of unit {unit}: {pumps} pumps, {banks} accumulator banks, {regulators} regulators, {functions} functions."
-    )
+    alt_unit: str = "Schematic of unit {unit}: {pumps} pumps, {banks} accumulator banks, {regulators} regulators, {functions} functions."
     alt_sheet: str = "This is sheet {number} of {count}."
     alt_shown: str = "Shown here: {names}."
     alt_zone: str = "Opened lines, in a hatched band: {names}."

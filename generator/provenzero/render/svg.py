@@ -79,9 +79,7 @@ def _shape(shape: Shape) -> str:
             return f'<polygon points="{_points(shape.points)}"{_fill(shape.fill)}{_pen(shape.pen)}/>'
         case Circle():
             x, y = shape.centre
-            return (
-                f'<circle cx="{_number(x)}" cy="{_number(y)}" r="{_number(shape.radius)}"{_fill(shape.fill)}{_pen(shape.pen)}/>'
-            )
+            return f'<circle cx="{_number(x)}" cy="{_number(y)}" r="{_number(shape.radius)}"{_fill(shape.fill)}{_pen(shape.pen)}/>'
         case Rect():
             x, y = shape.at
             corner = f' rx="{_number(shape.round_mm)}"' if shape.round_mm else ""

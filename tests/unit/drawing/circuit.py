@@ -17,7 +17,9 @@ def untruths(unit: Unit, network: Network, sheets: Sequence[Drawing]) -> list[st
 
 
 def not_once(unit: Unit, network: Network, sheets: Sequence[Drawing]) -> Iterator[str]:
-    drawn = Counter(name for sheet in sheets for group in sheet.groups if group.kind is Kind.SYMBOL for name in group.names)
+    drawn = Counter(
+        name for sheet in sheets for group in sheet.groups if group.kind is Kind.SYMBOL for name in group.names
+    )
     equipment = [unit.reservoir.tag, *(p.tag for p in unit.pumps), *(p.tag for p in unit.panels)]
     equipment += [f.name for f in unit.functions] + [b.tag for b in unit.banks] + [n.tag for n in unit.nitrogen_backups]
     equipment += [port.equipment for port in network.ports if port.name == "gas" and "/" in port.equipment]

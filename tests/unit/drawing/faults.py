@@ -65,8 +65,11 @@ def symbols_overlap(drawing: Drawing) -> Iterator[str]:
 
 def lines_through_symbols(drawing: Drawing) -> Iterator[str]:
     """A line may end at a symbol, or within the margin of its box; no line may cross its body."""
-    bodies = [(g, g.body.grown(-BOX_MARGIN - TOUCH) if g.role is Role.ISOLATION else g.body.grown(-TOUCH))
-              for g in drawing.groups if g.body is not None]
+    bodies = [
+        (g, g.body.grown(-BOX_MARGIN - TOUCH) if g.role is Role.ISOLATION else g.body.grown(-TOUCH))
+        for g in drawing.groups
+        if g.body is not None
+    ]
     for line in drawing.groups:
         if line.kind is not Kind.LINE:
             continue
@@ -91,14 +94,28 @@ def lines_on_lines(drawing: Drawing) -> Iterator[str]:
 
 
 def texts_overlap(drawing: Drawing) -> Iterator[str]:
-    """Words stand clear of other words, of symbols that are not their own, of marks and of lines."""
+    """Words, marks and labels stand clear of each other, of symbols that are not their own and of lines."""
+    yield from _words_on_words(drawing)
+    outlines = [(g, g.body) for g in drawing.groups if g.body is not None]
+    outlines += [(g, around(g)) for g in drawing.groups if g.kind in (Kind.MARK, Kind.LABEL) and g.shapes]
+    pieces = [(g, band(s, e, g)) for g in drawing.groups if g.kind is Kind.LINE for s, e in segments(g)]
+    yield from _words_on_others(drawing, outlines, pieces)
+    yield from _marks_on_marks(outlines)
+    yield from _labels_on_others(outlines, pieces)
+
+
+def _words_on_words(drawing: Drawing) -> Iterator[str]:
     words = [(g, t, box_of(t)) for g in drawing.groups for t in texts(g)]
     for (one, a, first), (other, b, second) in combinations(words, 2):
         if overlap(first, second):
             yield f"words {a.words} of {one.names} lie on words {b.words} of {other.names}"
-    outlines = [(g, g.body) for g in drawing.groups if g.body is not None]
-    outlines += [(g, around(g)) for g in drawing.groups if g.kind in (Kind.MARK, Kind.LABEL) and g.shapes]
-    pieces = [(g, band(s, e, g)) for g in drawing.groups if g.kind is Kind.LINE for s, e in segments(g)]
+
+
+Outlines = list[tuple[Group, Box]]
+
+
+def _words_on_others(drawing: Drawing, outlines: Outlines, pieces: Outlines) -> Iterator[str]:
+    words = [(g, t, box_of(t)) for g in drawing.groups for t in texts(g)]
     for group, text, box in words:
         for symbol, body in outlines:
             own = symbol is group or (group.kind is Kind.MARK and symbol.names == group.names)
@@ -107,9 +124,15 @@ def texts_overlap(drawing: Drawing) -> Iterator[str]:
         for line, piece in pieces:
             if group.kind not in (Kind.LABEL, Kind.SYMBOL) and overlap(box, piece):
                 yield f"words {text.words} of {group.names} lie on line {line.names}"
+
+
+def _marks_on_marks(outlines: Outlines) -> Iterator[str]:
     for (one, a), (other, b) in combinations([o for o in outlines if o[0].kind is not Kind.SYMBOL], 2):
         if overlap(a, b) and not (lozenge_corner(one, b) or lozenge_corner(other, a)):
             yield f"{one.kind} {one.names} lies on {other.kind} {other.names}"
+
+
+def _labels_on_others(outlines: Outlines, pieces: Outlines) -> Iterator[str]:
     for label, box in outlines:
         if label.kind is Kind.LABEL:
             for symbol, body in outlines:
@@ -144,7 +167,10 @@ def segments(group: Group) -> Iterator[tuple[Point, Point]]:
 def band(start: Point, end: Point, line: Group) -> Box:
     half = BAND_HALF if line.role is Role.ZONE else 0.2
     return Box(
-        min(start[0], end[0]) - half, min(start[1], end[1]) - half, max(start[0], end[0]) + half, max(start[1], end[1]) + half
+        min(start[0], end[0]) - half,
+        min(start[1], end[1]) - half,
+        max(start[0], end[0]) + half,
+        max(start[1], end[1]) + half,
     )
 
 
