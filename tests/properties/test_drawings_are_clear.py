@@ -3,16 +3,16 @@
 from typing import Any
 
 from hypothesis import HealthCheck, Phase, given, settings
+from tests.properties.planning import places, unit_from
+from tests.properties.strategies import unit_data
+from tests.unit.drawing.circuit import untruths
+from tests.unit.drawing.faults import faults
 
 from provenzero.drawing.arrange import overview
 from provenzero.drawing.marks import marks_of
 from provenzero.network.compile import compile_network
 from provenzero.plan.make import make_plan
 from provenzero.plan.model import Plan
-from tests.properties.planning import places, unit_from
-from tests.properties.strategies import unit_data
-from tests.unit.drawing.circuit import untruths
-from tests.unit.drawing.faults import faults
 
 
 @settings(

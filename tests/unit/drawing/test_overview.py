@@ -1,15 +1,15 @@
 """The circuit drawing: nothing lies on anything else, everything is there once, and what the job does is marked."""
 
 import pytest
+from tests.properties.planning import example, places, plan_of
+from tests.unit.drawing.circuit import unmarked, untruths
+from tests.unit.drawing.faults import faults
 
 from provenzero.drawing.arrange import overview
 from provenzero.drawing.marks import marks_of
 from provenzero.drawing.model import Kind
 from provenzero.plan.model import Plan
 from provenzero.render.svg import svg
-from tests.properties.planning import example, places, plan_of
-from tests.unit.drawing.circuit import unmarked, untruths
-from tests.unit.drawing.faults import faults
 
 UNITS = ("land-rig", "jack-up", "workover")
 
