@@ -19,6 +19,7 @@ if TYPE_CHECKING:
     from provenzero.document.context import PermitContext
     from provenzero.document.model import Document
     from provenzero.drawing.model import Drawing
+    from provenzero.network.model import DeviceTag, Network
     from provenzero.plan.model import Plan, Refusal, Verdict
 
 _GROUP = 8
@@ -29,7 +30,10 @@ UNITS = {"psi": US, "bar": METRIC}
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Request:
-    """What somebody asks for. `issued` is the time printed as the time of issue; nothing here reads a clock."""
+    """What somebody asks for. `issued` is the time printed as the time of issue; nothing here reads a clock.
+
+    `standing`: devices that do not stand in their normal position now, each as `TAG=position`.
+    """
 
     unit_file: Path
     job: str
@@ -40,6 +44,7 @@ class Request:
     paper: str = "a4"
     units: str = "psi"
     own_jobs: Path | None = None
+    standing: tuple[str, ...] = ()
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -114,18 +119,41 @@ def _fingerprint(request: Request, loaded: Loaded, job: Job) -> str:
         "job": repr(job),
         "on": request.on,
         "units": request.units,
+        "standing": sorted(request.standing),
         "tool": __version__,
     }
     text = json.dumps(inputs, sort_keys=True, ensure_ascii=False, separators=(",", ":"))
     return hashlib.sha256(text.encode("utf-8")).hexdigest()
 
 
-def plan(asked: Asked) -> "Plan | Refusal":
-    """Plan what was asked."""
+def plan(asked: Asked) -> "Plan | Refusal | Mistake":
+    """Plan what was asked, from where the devices stand."""
     from provenzero.network.compile import compile_network  # noqa: PLC0415 - help and check do without
     from provenzero.plan.make import make_plan  # noqa: PLC0415
 
-    return make_plan(asked.unit, compile_network(asked.unit), asked.job, asked.request.on)
+    network = compile_network(asked.unit)
+    positions = _standing(network, asked.request.standing)
+    if isinstance(positions, Mistake):
+        return positions
+    return make_plan(asked.unit, network, asked.job, asked.request.on, positions)
+
+
+def _standing(network: "Network", words: tuple[str, ...]) -> "dict[DeviceTag, str] | Mistake":
+    """Positions by device from `TAG=position`; each must be there."""
+    found: dict[DeviceTag, str] = {}
+    devices = {str(tag): device for tag, device in network.devices.items() if device.movable}
+    for word in words:
+        tag, sign, position = word.partition("=")
+        if not sign:
+            return Mistake(words=f"{word} does not say a position", cure="write TAG=position, such as HV-2=close")
+        if tag not in devices:
+            return Mistake(words=f"there is no device {tag} that can be moved", cure=_near(tag, list(devices)))
+        if position not in devices[tag].positions:
+            return Mistake(
+                words=f"{tag} has no position {position}", cure=_near(position, list(devices[tag].positions))
+            )
+        found[devices[tag].tag] = position
+    return found
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

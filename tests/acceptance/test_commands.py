@@ -366,3 +366,32 @@ def test_markup_in_a_label_cannot_act_on_the_page(tmp_path: Path) -> None:
     page = (tmp_path / "out" / "HCU-7_replace-hoses_upper-pipe-rams.html").read_text(encoding="utf-8")
     assert "<script>alert(1)" not in page
     assert "&lt;script&gt;alert(1)" in page
+
+
+def test_a_permit_is_made_for_the_unit_as_it_stands_and_says_so(tmp_path: Path) -> None:
+    run(
+        "permit",
+        LAND_RIG,
+        *HOSES,
+        "annular",
+        "--standing",
+        "IV-1=closed",
+        "--out",
+        tmp_path,
+        "--format",
+        "html",
+        code=DONE,
+    )
+    page = next(tmp_path.glob("*.html")).read_text(encoding="utf-8")
+    assert "Made for the unit as it stands" in page
+    assert "IV-1 CLOSED" in page
+
+
+@pytest.mark.parametrize(
+    ("word", "cure"),
+    [("HV2=close", "did you mean HV-2?"), ("HV-2=shut", "open, centre, close"), ("HV-2", "TAG=position")],
+)
+def test_a_device_or_a_position_that_is_not_there_is_told(word: str, cure: str, tmp_path: Path) -> None:
+    done = run("permit", LAND_RIG, *HOSES, "annular", "--standing", word, "--out", tmp_path / "out", code=BAD_INPUT)
+    assert cure in done.stderr
+    assert not (tmp_path / "out").exists()

@@ -9,6 +9,7 @@ from tests.properties.planning import example, network_of, places, unit_from, wr
 from tests.properties.strategies import unit_data
 
 from provenzero.network.compile import compile_network
+from provenzero.network.model import DeviceTag
 from provenzero.plan.make import make_plan
 from provenzero.plan.model import Plan
 from provenzero.proof.prove import prove
@@ -58,3 +59,26 @@ def test_the_same_input_gives_the_same_plan_file(data: dict[str, Any]) -> None:
             assert written(one) == written(other)
         else:
             assert type(one) is type(other)
+
+
+@pytest.mark.parametrize(
+    ("name", "standing"),
+    [
+        ("land-rig", {"HV-2": "close", "HV-5": "open"}),
+        ("land-rig", {"HV-2": "centre", "IV-1": "closed"}),
+        ("jack-up", {"HV-3": "close", "Q-1": "off", "IV-2": "closed"}),
+        ("jack-up", {"HV-1": "close"}),
+        ("workover", {"HV-B": "close", "AV-A2": "closed"}),
+    ],
+)
+def test_a_plan_from_where_the_devices_stand_now_keeps_all_properties_and_ends_there(
+    name: str, standing: dict[str, str]
+) -> None:
+    positions = {DeviceTag(tag): position for tag, position in standing.items()}
+    for job, on in places(example(name)):
+        plan = make_plan(example(name), network_of(name), job, on, positions)
+        if isinstance(plan, Plan):
+            assert not _faults(plan), (job.id, on)
+            assert {tag: plan.end().positions[tag] for tag in positions} == positions
+        else:
+            assert plan.obstacles

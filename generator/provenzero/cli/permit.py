@@ -42,6 +42,12 @@ def permit(  # noqa: PLR0913, PLR0917 - each is an option of the command line, g
     paper: Annotated[Paper, typer.Option(help="Sheet.")] = Paper.A4,
     units: Annotated[Pressure, typer.Option(help="Units that come first.")] = Pressure.PSI,
     own_jobs: Annotated[Path | None, typer.Option(help="Folder with job files of the site's own.")] = None,
+    standing: Annotated[
+        list[str] | None,
+        typer.Option(
+            help="A device that is not in its normal position now, as TAG=position; several times if need be."
+        ),
+    ] = None,
     issued: Annotated[str, typer.Option(help="Time of issue, as it is printed; now if left out.")] = "",
     explain: Annotated[bool, typer.Option("--explain", help="Print why each lock and each step is there.")] = False,
 ) -> None:
@@ -69,6 +75,7 @@ def permit(  # noqa: PLR0913, PLR0917 - each is an option of the command line, g
         paper=paper.value,
         units=units.value,
         own_jobs=own_jobs,
+        standing=tuple(standing or ()),
     )
     asked = pipeline.ask(request)
     if isinstance(asked, pipeline.Mistake):
@@ -78,6 +85,8 @@ def permit(  # noqa: PLR0913, PLR0917 - each is an option of the command line, g
     for finding in asked.loaded.findings:
         tell(str(finding))
     plan = pipeline.plan(asked)
+    if isinstance(plan, pipeline.Mistake):
+        mistake(plan.words, plan.cure)
     if isinstance(plan, Refusal):
         tell(f"refused: no safe plan for {job} on {on} of {asked.unit.identity.tag}")
         for reason in pipeline.refusal(asked, plan):

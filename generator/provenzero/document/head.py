@@ -118,6 +118,7 @@ def _scope(brief: Brief) -> Bullets:
     points = (
         brief.say("scope.use", job=plan.job.title, on=brief.equipment(plan.on), unit=plan.unit.identity.tag),
         brief.say("scope.opens", names=brief.lines(plan.zone, most=8)),
+        *_standing(brief),
         *plan.job.limits,
         brief.say("scope.not_covered"),
         brief.say("scope.change"),
@@ -125,6 +126,15 @@ def _scope(brief: Brief) -> Bullets:
         brief.say("scope.maker"),
     )
     return Bullets(title=brief.say("scope.title"), points=points)
+
+
+def _standing(brief: Brief) -> tuple[str, ...]:
+    """What does not stand in its normal position when the job starts."""
+    start = brief.plan.start().positions
+    away = [tag for tag, device in brief.plan.network.devices.items() if start[tag] != device.normal]
+    if not away:
+        return ()
+    return (brief.say("scope.standing", names=brief.some((f"{t} {brief.position(start[t])}" for t in away), most=8)),)
 
 
 def _rules(brief: Brief) -> Bullets:
