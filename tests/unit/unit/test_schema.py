@@ -80,8 +80,9 @@ def test_each_example_fits_the_part_that_it_is_an_example_of(path: str, part: Ma
 
 @pytest.mark.parametrize(("name", "dimension"), QUANTITIES.items())
 def test_each_example_of_a_quantity_can_be_read(name: str, dimension: Dimension) -> None:
-    for example in SCHEMA["$defs"][name]["examples"]:
-        parse(example, dimension)
+    read = [parse(example, dimension) for example in SCHEMA["$defs"][name]["examples"]]
+    assert read
+    assert all(abs(value) < 1e9 for value in read)
 
 
 def test_each_definition_with_the_form_of_a_quantity_is_held_against_its_dimension() -> None:

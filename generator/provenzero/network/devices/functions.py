@@ -2,7 +2,7 @@
 
 from provenzero.network.builder import Builder, way
 from provenzero.network.devices.remote import movers
-from provenzero.network.devices.runs import fitting, run
+from provenzero.network.devices.runs import fitting, has_inline, run
 from provenzero.network.model import (
     HAND,
     Actuator,
@@ -40,7 +40,7 @@ def function(builder: Builder, item: Function, panels: tuple[Panel, ...], *, com
     open_line, close_line = LineId(f"{item.name}.open"), LineId(f"{item.name}.close")
     feed = LineId(item.fed_from)
     supply = feed
-    if any(type(e).__name__ in {"Valve", "CheckValve", "Strainer", "Reducer"} for e in valve.supply):
+    if has_inline(valve.supply):
         supply = builder.line(f"{item.name}.supply", f"{item.label}, supply of the four-way valve")
     run(
         builder,

@@ -3,7 +3,7 @@
 from dataclasses import replace
 
 from provenzero.network.builder import Builder, way
-from provenzero.network.devices.runs import run
+from provenzero.network.devices.runs import has_inline, run
 from provenzero.network.model import DeviceKind, LineId, Medium, Source, SourceKind
 from provenzero.unit.model import CheckValve, Drive, Element, Isolator, Pump, Valve
 
@@ -16,7 +16,7 @@ def pump(builder: Builder, item: Pump) -> None:
     A hand pump is always live, unless its lever can be taken off and locked away: that is its isolator.
     """
     suction = LIQUID
-    if any(not _tee(e) for e in item.suction):
+    if has_inline(item.suction):
         suction = builder.line(f"{item.tag}.suction", f"suction of pump {item.tag}")
     met = run(
         builder,
@@ -31,7 +31,7 @@ def pump(builder: Builder, item: Pump) -> None:
     delivery = LineId(item.delivers_to)
     elements, own_check = _without_own_check(item.discharge)
     outlet = delivery
-    if any(not _tee(e) for e in elements):
+    if has_inline(elements):
         outlet = builder.line(f"{item.tag}.outlet", f"outlet of pump {item.tag}")
     run(
         builder,
@@ -69,13 +69,6 @@ def _low_pag(item: Pump) -> float:
     if item.drive is Drive.HAND:
         return 0.0
     return item.stop_pressure_pag if item.start_pressure_pag is None else item.start_pressure_pag
-
-
-def _tee(element: Element) -> bool:
-    return not isinstance(element, (Valve, CheckValve)) and type(element).__name__ not in {
-        "Strainer",
-        "Reducer",
-    }
 
 
 def _without_own_check(elements: tuple[Element, ...]) -> tuple[tuple[Element, ...], CheckValve | None]:

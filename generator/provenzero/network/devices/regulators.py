@@ -1,7 +1,7 @@
 """Regulators and the bypasses around them."""
 
 from provenzero.network.builder import Builder, passage, way
-from provenzero.network.devices.runs import fitting, run
+from provenzero.network.devices.runs import fitting, has_inline, run
 from provenzero.network.model import (
     FULL_OPEN,
     HAND,
@@ -30,7 +30,7 @@ def regulator(builder: Builder, item: Regulator, *, common_returns: bool) -> Non
     main = LineId(item.fed_from)
     serves = LineId(item.serves)
     inlet = main
-    if any(type(e).__name__ in {"Valve", "CheckValve", "Strainer", "Reducer"} for e in item.upstream):
+    if has_inline(item.upstream):
         inlet = builder.line(f"{item.tag}.inlet", f"inlet of regulator {item.tag}")
     run(builder, item.upstream, start=main, end=inlet, prefix=f"{item.tag}.inlet", words=f"feed of {item.tag}")
     for element in item.fittings:

@@ -2,7 +2,7 @@
 
 from provenzero.network.builder import Builder, passage, way
 from provenzero.network.devices.pumps import electric_supply
-from provenzero.network.devices.runs import fitting, run
+from provenzero.network.devices.runs import fitting, has_inline, run
 from provenzero.network.model import (
     HAND,
     Device,
@@ -28,7 +28,7 @@ def air(builder: Builder, item: AirSupply) -> None:
     run(builder, item.run, start=rig, end=unit, prefix="air.feed", words="air supply", medium=Medium.AIR)
     for element in item.fittings:
         fitting(builder, element, unit)
-    if not any(type(e).__name__ in {"Valve", "CheckValve", "Strainer", "Reducer"} for e in item.run):
+    if not has_inline(item.run):
         builder.fixed("air-piping", DeviceKind.PIPING, "air pipe to the unit", "", way(rig, unit))
     builder.sources.append(
         Source(

@@ -19,6 +19,11 @@ from provenzero.unit.model import (
 _INLINE = (Valve, CheckValve, Strainer, Reducer)
 
 
+def has_inline(elements: Sequence[Element]) -> bool:
+    """Whether a run has anything that the fluid passes through, so that its two ends are two lines."""
+    return any(isinstance(e, _INLINE) for e in elements)
+
+
 def run(  # noqa: PLR0913 - a run is its two ends, its elements and its words
     builder: Builder,
     elements: Sequence[Element],
