@@ -1,6 +1,8 @@
 """The HTML permit in a real browser: it asks for nothing, reports no error, fits a phone, and its parts can be reached."""
 
+import ctypes.util
 import shutil
+import sys
 from collections.abc import Iterator
 from pathlib import Path
 
@@ -16,9 +18,11 @@ from provenzero.render.svg import svg
 CHROMIUM = shutil.which("chromium") or shutil.which("chromium-browser")
 QUIET = ["--no-sandbox", "--disable-gpu", "--disable-quic", "--disable-background-networking", "--disable-sync"]
 
+DRIVER = not sys.platform.startswith("linux") or ctypes.util.find_library("atomic") is not None
+
 pytestmark = [
     pytest.mark.browser,
-    pytest.mark.skipif(CHROMIUM is None, reason="there is no Chromium on this machine"),
+    pytest.mark.skipif(CHROMIUM is None or not DRIVER, reason="no Chromium here, or no libatomic for its driver"),
 ]
 
 
