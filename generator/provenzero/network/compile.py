@@ -120,10 +120,12 @@ def _tank(builder: Builder, unit: Unit, density_kg_m3: float) -> None:
 def _whole(builder: Builder) -> None:
     """Ports of the whole unit: every line that would be opened if all of it were taken apart, gas sides apart."""
     vents = {ATMOSPHERE, RESERVOIR, RETURNS, str(LIQUID)}
+    # A panel without an isolator hangs on its supply itself: the supply is then part of what is taken apart.
+    uncut = {p.line for p in builder.ports if p.name == "power" and p.line.startswith("supply.")}
     for key, line in list(builder.lines.items()):
         if line.medium is Medium.CONTROL_FLUID and key not in vents and not key.endswith(".return"):
             builder.port("unit", "fluid", key)
         if key == "air" or (line.medium is Medium.AIR and key.endswith(".drive")):
             builder.port("unit", "air", key)
-        if line.medium is Medium.ELECTRIC and not key.startswith("supply."):
+        if line.medium is Medium.ELECTRIC and (key in uncut or not key.startswith("supply.")):
             builder.port("unit", "power", key)

@@ -57,3 +57,12 @@ def test_a_stub_behind_a_check_valve_without_a_bleed_cannot_be_shown_dead() -> N
 def test_a_port_that_is_not_there_is_a_mistake_of_the_caller() -> None:
     with pytest.raises(ValueError, match="no port"):
         plan_of(example("jack-up"), "replace-hoses", "P-1")
+
+
+def test_a_panel_that_hangs_on_its_supply_without_an_isolator_keeps_the_unit_from_being_locked_out() -> None:
+    def no_isolator(data: dict[str, Any]) -> None:
+        data["panels"][1]["energy"] = "none"
+
+    refused = plan_of(unit_from(changed("jack-up", no_isolator)), "lock-out-for-transport", "unit")
+    assert isinstance(refused, Refusal)
+    assert ("supply.emergency switchboard", "no_isolator") in {(o.line, o.words) for o in refused.obstacles}
