@@ -2,13 +2,14 @@
 
 import hashlib
 import json
+from collections.abc import Sequence
 from dataclasses import dataclass
 from pathlib import Path
 from typing import TYPE_CHECKING
 
 from provenzero import __version__
-from provenzero.catalogue.applies import applies_to
-from provenzero.catalogue.job import Job
+from provenzero.catalogue.applies import applies_to, misfit
+from provenzero.catalogue.job import Equipment, Job
 from provenzero.catalogue.load import Catalogue, catalogue
 from provenzero.quantity import METRIC, US, Units
 from provenzero.reading.nearest import nearest
@@ -96,19 +97,23 @@ def ask(request: Request) -> Asked | Mistake | Loaded:
         return Mistake(words=f"there is no job {request.job}", cure=_near(request.job, known))
     places = next((on for each, on in pairs if each.id == job.id), ())
     if request.on not in places:
-        words = f"{job.id} cannot be done on {request.on} of {loaded.unit.identity.tag}"
-        return Mistake(words=words, cure=_near(request.on, list(places)))
+        why = misfit(job, loaded.unit, request.on)
+        meant = why.meant if why.known else nearest(request.on, places)
+        return Mistake(words=why.words, cure=_possible(places, meant))
     return Asked(
         request=request, loaded=loaded, unit=loaded.unit, job=job, fingerprint=_fingerprint(request, loaded, job)
     )
 
 
-def _near(word: str, known: list[str]) -> str:
+def _near(word: str, known: Sequence[str]) -> str:
+    return _possible(known, nearest(word, known))
+
+
+def _possible(known: Sequence[str], meant: str | None) -> str:
     if not known:
         return "this job applies to nothing on this unit; `provenzero jobs` lists what does"
-    near = nearest(word, known)
     shown = ", ".join(known if len(known) <= _GROUP else [*known[:_GROUP], "..."])
-    return (f"did you mean {near}? " if near else "") + f"possible: {shown}"
+    return (f"did you mean {meant}? " if meant else "") + f"possible: {shown}"
 
 
 def _fingerprint(request: Request, loaded: Loaded, job: Job) -> str:
@@ -135,7 +140,23 @@ def plan(asked: Asked) -> "Plan | Refusal | Mistake":
     positions = _standing(network, asked.request.standing)
     if isinstance(positions, Mistake):
         return positions
+    lacking = _lacking(network, asked)
+    if lacking is not None:
+        return lacking
     return make_plan(asked.unit, network, asked.job, asked.request.on, positions)
+
+
+def _lacking(network: "Network", asked: Asked) -> Mistake | None:
+    """A port that the job opens and this piece does not have: a job file asks for more than was built."""
+    job, on = asked.job, asked.request.on
+    lacking = [name for name in job.opens if not network.opened(on, (name,))]
+    needed = [name for name in lacking if name not in job.optional]
+    cure = "see `opens` in the job file: a name with ? at its end is opened only where there is such a port"
+    if len(lacking) == len(job.opens):
+        return Mistake(words=f"{on} has none of the ports that {job.id} opens ({', '.join(lacking)})", cure=cure)
+    if needed and job.equipment is not Equipment.UNIT:
+        return Mistake(words=f"{on} has no port {', '.join(needed)}, which {job.id} opens", cure=cure)
+    return None
 
 
 def _standing(network: "Network", words: tuple[str, ...]) -> "dict[DeviceTag, str] | Mistake":
@@ -219,16 +240,3 @@ def _context(asked: Asked) -> "PermitContext":
         hold_s=_HOLD_S,
         recheck_s=_RECHECK_S,
     )
-
-
-def explained(made: "Plan") -> list[str]:
-    """For each lock what it holds back and by which way; for each step the rule that put it there."""
-    lines = []
-    for lock in made.locks:
-        lines.append(f"lock {lock.number}  {lock.device} {lock.position}  ({lock.purpose.value})")
-        lines += [f"    without it: {' > '.join(path)}" for path in lock.holds_back]
-        lines += [f"    keeps open to a vent: {line}" for line in lock.keeps_open]
-    for step in made.steps:
-        what = f"{step.device} {step.position}" if step.device else step.facts.get("text", "")
-        lines.append(f"step {step.id}  {step.kind.value}  {what}  because: {step.reason}".replace("    ", "  "))
-    return lines

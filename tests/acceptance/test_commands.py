@@ -21,7 +21,9 @@ HOSES = ("--job", "replace-hoses", "--on")
 DONE, FOUND, BAD_INPUT = 0, 1, 2
 
 
-def run(*words: str | Path, folder: Path | None = None, code: int | None = None) -> subprocess.CompletedProcess[str]:
+def run(
+    *words: str | Path, folder: Path | None = None, code: int | None = None, columns: int = 200
+) -> subprocess.CompletedProcess[str]:
     """Call the command; whatever happens, it never answers with a traceback or with a fault of its own."""
     done = subprocess.run(
         [sys.executable, "-m", "provenzero", *map(str, words)],
@@ -31,7 +33,7 @@ def run(*words: str | Path, folder: Path | None = None, code: int | None = None)
         encoding="utf-8",
         check=False,
         timeout=120,
-        env=os.environ | {"PYTHONUTF8": "1", "COLUMNS": "200"},
+        env=os.environ | {"PYTHONUTF8": "1", "COLUMNS": str(columns)},
     )
     said = done.stdout + done.stderr
     assert "Traceback" not in said, said
@@ -247,6 +249,19 @@ def test_a_permit_is_written_as_a_page_and_as_a_plan_that_fits_its_schema(
     assert "http://" not in page.replace("http://www.w3.org/", "")
 
 
+@pytest.mark.parametrize("file", sorted(EXAMPLES.glob("*.yaml")), ids=lambda file: file.stem)
+def test_every_job_that_applies_to_an_example_gets_a_proven_permit(file: Path, tmp_path: Path) -> None:
+    listed = json.loads(run("jobs", file, "--format", "json", code=DONE).stdout)["jobs"]
+    assert len(listed) >= 8
+    for entry in listed:
+        words = ("--job", entry["job"], "--on", entry["on"][-1])
+        done = run("permit", file, *words, "--out", tmp_path, "--format", "json", code=DONE)
+        plan = json.loads(Path(done.stdout.strip()).read_text(encoding="utf-8"))
+        assert plan["zone"], entry["job"]
+        assert all(verdict["holds"] for verdict in plan["proof"].values()), entry["job"]
+    assert len(names(tmp_path)) == len(listed)
+
+
 def test_a_permit_is_written_as_a_pdf(tmp_path: Path) -> None:
     run("permit", LAND_RIG, *HOSES, "upper-pipe-rams", "--out", tmp_path, "--format", "pdf", code=DONE)
     [name] = names(tmp_path)
@@ -291,6 +306,38 @@ def test_a_job_or_a_tag_that_is_not_there_gets_the_nearest_one(job: str, on: str
     done = run("permit", LAND_RIG, "--job", job, "--on", on, "--out", tmp_path / "out", code=BAD_INPUT)
     assert cure in done.stderr
     assert names(tmp_path) == []
+
+
+@pytest.mark.parametrize(
+    ("job", "on", "why", "cure"),
+    [
+        ("replace-hoses", "HV-2", "HV-2 is a four-way valve", "did you mean upper-pipe-rams?"),
+        ("replace-bottle-bladder", "BK-2", "BK-2 is a bank of bottles", "did you mean BK-2/1?"),
+        ("overhaul-air-pump", "P-1", "P-1 is a pump (drive: electric)", "; possible: P-2"),
+        ("lock-out-for-transport", "HCU-7", "done on the whole unit", "did you mean unit?"),
+    ],
+)
+def test_a_tag_of_another_kind_is_told_what_it_is_and_what_goes_with_it(job: str, on: str, why: str, cure: str) -> None:
+    done = run("permit", LAND_RIG, "--job", job, "--on", on, code=BAD_INPUT)
+    [line] = done.stderr.splitlines()
+    assert why in line
+    assert cure in line
+
+
+def test_what_somebody_typed_cannot_steer_the_terminal() -> None:
+    done = run("permit", LAND_RIG, *HOSES, "a\nb\x1b[31m", code=BAD_INPUT)
+    assert "\x1b" not in done.stderr
+    assert len(done.stderr.splitlines()) == 1
+
+
+def test_a_job_of_the_site_that_opens_a_port_its_equipment_never_has_is_told_with_its_line(tmp_path: Path) -> None:
+    shipped = HERE.parents[1] / "checklists" / "jobs" / "replace-hoses.yaml"
+    file = tmp_path / "own.yaml"
+    file.write_text(shipped.read_text(encoding="utf-8").replace("close_line]", "suction]"), encoding="utf-8")
+    done = run("permit", LAND_RIG, *HOSES, "annular", "--own-jobs", tmp_path, "--out", tmp_path / "out", code=BAD_INPUT)
+    assert f"{file}:5:" in done.stderr
+    assert "suction, which no function has" in done.stderr
+    assert not (tmp_path / "out").exists()
 
 
 def test_a_format_that_is_not_there_is_refused_before_anything_is_written(tmp_path: Path) -> None:
@@ -352,6 +399,46 @@ def test_schema_prints_the_schema_of_each_kind_of_file(kind: str) -> None:
 @pytest.mark.parametrize("command", ["new", "check", "jobs", "permit", "schema"])
 def test_each_command_has_help(command: str) -> None:
     assert f"provenzero {command}" in run(command, "--help", code=DONE).stdout
+
+
+@pytest.mark.parametrize("command", ["new", "check", "jobs", "permit", "schema"])
+def test_the_examples_in_the_help_can_be_copied_as_they_stand(command: str) -> None:
+    lines = run(command, "--help", columns=80, code=DONE).stdout.splitlines()
+    given = [line.strip().removeprefix("Example: ") for line in lines if f"provenzero {command} " in line]
+    examples = [line for line in given if not line.startswith("Usage:")]
+    assert examples
+    for example in examples:
+        assert example.startswith(f"provenzero {command} ")
+    following = [lines[i + 1] for i, line in enumerate(lines) if line.strip().endswith(tuple(examples))]
+    assert [line for line in following if line.strip()] == [], "an example that runs on in the next line"
+
+
+@pytest.mark.skipif(not Path("/dev/full").exists(), reason="no device that is always full")
+@pytest.mark.parametrize("words", [("schema",), ("jobs", LAND_RIG, "--format", "json"), ("check", LAND_RIG)])
+def test_a_result_that_finds_no_room_is_told(words: tuple[str | Path, ...]) -> None:
+    with Path("/dev/full").open("wb") as full:
+        done = subprocess.run(
+            [sys.executable, "-m", "provenzero", *map(str, words)], stdout=full, stderr=subprocess.PIPE, check=False
+        )
+    assert done.returncode == BAD_INPUT
+    assert done.stderr.decode().startswith("found an output that takes no more")
+    assert len(done.stderr.splitlines()) == 1
+
+
+def test_a_reader_that_has_gone_ends_the_program_without_a_word() -> None:
+    with subprocess.Popen(
+        [sys.executable, "-m", "provenzero", "schema"], stdout=subprocess.PIPE, stderr=subprocess.PIPE
+    ) as process:
+        assert process.stdout is not None
+        assert process.stderr is not None
+        process.stdout.close()
+        assert process.stderr.read() == b""
+
+
+def test_a_file_name_that_is_too_long_is_bad_input(tmp_path: Path) -> None:
+    long = tmp_path / f"{'x' * 300}.yaml"
+    for words in (("new", long), ("check", long), ("jobs", LAND_RIG, "--own-jobs", long)):
+        assert "found" in run(*words, code=BAD_INPUT).stderr
 
 
 def test_a_command_that_is_not_there_is_bad_input() -> None:

@@ -1,7 +1,9 @@
 """Jobs: what is opened on which kind of equipment, read from the catalogue or from a site's own file."""
 
+from collections.abc import Mapping
 from dataclasses import dataclass
 from enum import StrEnum
+from typing import Final
 
 
 class Equipment(StrEnum):
@@ -14,6 +16,45 @@ class Equipment(StrEnum):
     BYPASS = "bypass"
     BOTTLE = "bottle"
     UNIT = "unit"
+
+
+CALLED: Final[Mapping[Equipment, str]] = {
+    Equipment.FUNCTION: "function",
+    Equipment.FOUR_WAY_VALVE: "four-way valve",
+    Equipment.PUMP: "pump",
+    Equipment.REGULATOR: "regulator",
+    Equipment.BYPASS: "bypass valve",
+    Equipment.BOTTLE: "bottle",
+    Equipment.UNIT: "unit",
+}
+"""How people call a kind of equipment."""
+
+_FUNCTION_PORTS: Final = ("open_line", "close_line", "supply", "return", "pilot")
+
+PORTS: Final[Mapping[Equipment, tuple[str, ...]]] = {
+    Equipment.FUNCTION: _FUNCTION_PORTS,
+    Equipment.FOUR_WAY_VALVE: _FUNCTION_PORTS,
+    Equipment.PUMP: ("suction", "discharge", "drive"),
+    Equipment.REGULATOR: ("inlet", "outlet", "return", "pilot"),
+    Equipment.BYPASS: ("inlet", "outlet"),
+    Equipment.BOTTLE: ("fluid", "gas"),
+    Equipment.UNIT: ("fluid", "air", "power"),
+}
+"""The ports that a kind of equipment can have; not every piece has all of them."""
+
+ATTRIBUTES: Final[Mapping[Equipment, tuple[str, ...]]] = {
+    Equipment.FUNCTION: ("kind",),
+    Equipment.FOUR_WAY_VALVE: ("kind",),
+    Equipment.PUMP: ("drive",),
+    Equipment.REGULATOR: ("serves",),
+    Equipment.BYPASS: (),
+    Equipment.BOTTLE: ("separator",),
+    Equipment.UNIT: (),
+}
+"""What a job may ask of a piece of equipment under `only`."""
+
+WITH_PISTON: Final = frozenset({Equipment.FUNCTION, Equipment.FOUR_WAY_VALVE})
+"""Equipment that has an end for the piston to be left at."""
 
 
 class Leave(StrEnum):

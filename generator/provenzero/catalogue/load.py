@@ -1,12 +1,23 @@
 """Job files to jobs: the shipped catalogue, and a folder of the site's own beside it."""
 
-from collections.abc import Mapping
+import os.path
+from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 from pathlib import Path
 from typing import Any
 
-from provenzero.catalogue.job import Condition, Equipment, Job, Leave, TestKind
-from provenzero.finding import Finding, Place, has_errors
+from provenzero.catalogue.job import (
+    ATTRIBUTES,
+    CALLED,
+    PORTS,
+    WITH_PISTON,
+    Condition,
+    Equipment,
+    Job,
+    Leave,
+    TestKind,
+)
+from provenzero.finding import Finding, Place, has_errors, in_order
 from provenzero.reading.lines import Document, load, load_text
 from provenzero.reading.schema import check
 from provenzero.resources import checklists
@@ -46,13 +57,18 @@ def catalogue(own: Path | None = None) -> Catalogue:
 
 def read_folder(folder: Path) -> Catalogue:
     """Read the job files of a folder of the site, each job once."""
-    if not folder.is_dir():
-        place = Place(file=str(folder))
+    place = Place(file=str(folder))
+    if not os.path.isdir(folder):  # Path.is_dir raises where a name is too long
         return Catalogue(jobs=(), findings=(Finding(place=place, found="no such folder", expected=_FOLDER),))
+    try:
+        paths = sorted(p for p in folder.iterdir() if p.suffix in _ENDINGS)
+    except OSError as error:
+        found = f"a folder that cannot be read ({error.strerror})"
+        return Catalogue(jobs=(), findings=(Finding(place=place, found=found, expected=_FOLDER),))
     files: dict[str, Path] = {}
     jobs: list[Job] = []
     findings: list[Finding] = []
-    for path in sorted(p for p in folder.iterdir() if p.suffix in _ENDINGS):
+    for path in paths:
         read = read_job(path)
         findings += read.findings
         for job in read.jobs:
@@ -70,8 +86,33 @@ def read_job(path: Path) -> Catalogue:
     if not isinstance(document, Document):
         return Catalogue(jobs=(), findings=tuple(document))
     findings = check(document, "job")
+    if not has_errors(findings):  # what goes with which equipment can be told once each word is one of ours
+        findings += in_order(_mismatches(document))
     jobs = () if has_errors(findings) else (job_of(document.data),)
     return Catalogue(jobs=jobs, findings=tuple(findings))
+
+
+def _mismatches(document: Document) -> Iterator[Finding]:
+    """What a job asks of its kind of equipment and no piece of that kind has."""
+    data: Any = document.data
+    kind = Equipment(data["equipment"])
+    seen: set[str] = set()
+    for i, name in enumerate(data["opens"]):
+        port, place = name.removesuffix("?"), document.place(("opens", i))
+        if port not in PORTS[kind]:
+            expected = f"a port of a {CALLED[kind]}: {', '.join(PORTS[kind])}"
+            yield Finding(place=place, found=f"{port}, which no {CALLED[kind]} has", expected=expected)
+        elif port in seen:
+            yield Finding(place=place, found=f"the port {port} a second time", expected="each port once")
+        seen.add(port)
+    for key in data.get("only", {}):
+        if key not in ATTRIBUTES[kind]:
+            place = document.key_place(("only", key))
+            expected = ", ".join(ATTRIBUTES[kind]) or f"no condition on a {CALLED[kind]}"
+            yield Finding(place=place, found=f"{key}, which no {CALLED[kind]} has", expected=expected)
+    if data.get("leave", Leave.AS_FOUND) != Leave.AS_FOUND and kind not in WITH_PISTON:
+        expected = "leave only where there is a piston: on a function or a four-way valve"
+        yield Finding(place=document.key_place(("leave",)), found=f"leave on a {CALLED[kind]}", expected=expected)
 
 
 def job_of(data: Any) -> Job:

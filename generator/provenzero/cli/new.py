@@ -1,5 +1,6 @@
 """`provenzero new`: a starter description to fill in."""
 
+import os.path
 from pathlib import Path
 from typing import Annotated
 
@@ -20,7 +21,7 @@ def new(
     from provenzero.reading.write import write_atomically  # noqa: PLC0415 - only what this command needs
     from provenzero.resources import schemas  # noqa: PLC0415
 
-    if file.exists():
+    if os.path.lexists(file):  # Path.exists raises where a name is too long
         mistake(f"{file} is already there", "give another name, or move it away first")
     fault = write_atomically(file, schemas().joinpath("starter", "unit.yaml").read_bytes())
     if fault is not None:

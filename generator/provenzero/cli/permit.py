@@ -56,10 +56,11 @@ def permit(  # noqa: PLR0913, PLR0917 - each is an option of the command line, g
 
     Exit code 0: written. 1: refused, no safe plan was found or proven. 2: bad input.
 
-    Examples:
-    provenzero permit rig-7.yaml --job replace-hoses --on upper-pipe-rams --out out
+    For example:
 
-    provenzero permit rig-7.yaml --job overhaul-air-pump --on P-2 --format pdf,json --paper letter
+    provenzero permit rig-7.yaml --job replace-hoses --on upper-pipe-rams
+
+    provenzero permit rig-7.yaml --job overhaul-air-pump --on P-2 --format json
     """
     from provenzero import pipeline  # noqa: PLC0415 - `--help` answers without it
     from provenzero.plan.model import Refusal  # noqa: PLC0415
@@ -103,7 +104,9 @@ def permit(  # noqa: PLR0913, PLR0917 - each is an option of the command line, g
             tell(f"  {words}")
         raise typer.Exit(FOUND)
     if explain:
-        for line in pipeline.explained(plan):
+        from provenzero.cli.explain import explained  # noqa: PLC0415 - as above
+
+        for line in explained(plan, made.document):
             say(line)
     _write(made, out, asked.stem(), wanted)
 

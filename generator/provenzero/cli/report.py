@@ -5,7 +5,7 @@ import sys
 from collections.abc import Iterable, Iterator, Mapping, Sequence
 from contextlib import contextmanager
 from enum import StrEnum
-from typing import Any, NoReturn
+from typing import Any, NoReturn, TextIO
 
 import typer
 
@@ -24,8 +24,14 @@ class Form(StrEnum):
 
 
 def say(words: str) -> None:
-    """A line of the result."""
-    typer.echo(words)
+    """A line of the result. A reader that has gone ends the program quietly; a full disk is told."""
+    try:
+        typer.echo(words)
+    except BrokenPipeError:
+        raise
+    except OSError as error:
+        tell(f"found an output that takes no more ({error.strerror}); expected room for the result")
+        raise typer.Exit(BAD_INPUT) from error
 
 
 def tell(words: str) -> None:
@@ -36,7 +42,7 @@ def tell(words: str) -> None:
 def table(heads: Sequence[str], rows: Iterable[Sequence[str]]) -> None:
     """A table: drawn on a terminal, columns of plain text in a pipe or a file."""
     listed = [[_plain(cell) for cell in row] for row in rows]
-    if sys.stdout.isatty():
+    if _is_terminal(sys.stdout):
         from rich.console import Console  # noqa: PLC0415 - only for eyes
         from rich.table import Table  # noqa: PLC0415
         from rich.text import Text  # noqa: PLC0415
@@ -56,7 +62,7 @@ def table(heads: Sequence[str], rows: Iterable[Sequence[str]]) -> None:
 @contextmanager
 def progress(words: str) -> Iterator[None]:
     """Say that something takes a moment: a moving line on a terminal, one plain line elsewhere."""
-    if not sys.stderr.isatty():
+    if not _is_terminal(sys.stderr):
         tell(f"{words} ...")
         yield
         return
@@ -66,13 +72,18 @@ def progress(words: str) -> Iterator[None]:
         yield
 
 
+def _is_terminal(stream: TextIO | None) -> bool:
+    """Whether a person looks on; a stream that was closed before the start is None."""
+    return stream is not None and stream.isatty()
+
+
 def _plain(cell: str) -> str:
     return "".join(c if c.isprintable() else " " for c in cell)
 
 
 def as_json(data: Mapping[str, Any]) -> None:
     """A result for a machine."""
-    typer.echo(json.dumps(data, indent=1, ensure_ascii=False))
+    say(json.dumps(data, indent=1, ensure_ascii=False))
 
 
 def data_of(finding: Finding) -> dict[str, Any]:
@@ -102,5 +113,5 @@ def bad_input(findings: Iterable[Finding], form: Form = Form.TEXT) -> NoReturn:
 
 def mistake(words: str, cure: str) -> NoReturn:
     """Report a mistake on the command line and leave."""
-    tell(f"{words}; {cure}")
+    tell(_plain(f"{words}; {cure}"))
     raise typer.Exit(BAD_INPUT)

@@ -61,7 +61,8 @@ _DROP = 1.0
 class Cell:
     """A piece of a row about a point on its line.
 
-    `body`: where the line stops, None for what only stands on it. `clear`: up to where, from the left, nothing is near the line.
+    `body`: where the line stops, None for what only stands on it. `clear`: up to where, from the left, nothing is near
+    the line. `lead`: how far it reaches back under the cells before it.
     """
 
     left: float
@@ -73,6 +74,7 @@ class Cell:
     body: tuple[float, float] | None
     clear: float
     paint: Callable[[Canvas, float, float], None]
+    lead: float = 0.0
 
 
 def symbol_of(scene: Scene, element: Inline) -> Symbol:

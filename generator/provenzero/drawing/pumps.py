@@ -61,9 +61,8 @@ def _pump_cell(scene: Scene, item: Pump, suction: LineId, discharge: LineId, bef
     words = tag(item.tag)
     energy = _energy(scene, item)
     half = max(words.width / 2 + ROOM, PUMP_RADIUS + LEAD)
-    rise, left = PUMP_RADIUS + _SHAFT + DRIVE_RADIUS, half
+    rise = PUMP_RADIUS + _SHAFT + DRIVE_RADIUS
     if energy is not None:
-        left = max(half, energy.width + DRIVE_RADIUS + ROOM - sum(cell.left + cell.right for cell in before))
         rise = max(
             rise, max((cell.down for cell in before), default=0.0) + energy.up + 0.5, PUMP_RADIUS + energy.near + 0.2
         )
@@ -77,7 +76,7 @@ def _pump_cell(scene: Scene, item: Pump, suction: LineId, discharge: LineId, bef
             energy.draw(canvas, x - DRIVE_RADIUS, y + rise)
 
     return Cell(
-        left=left,
+        left=half,
         right=half,
         up=PUMP_RADIUS + words.reach,
         down=rise + max(DRIVE_RADIUS, 0.0 if energy is None else energy.down),
@@ -86,6 +85,7 @@ def _pump_cell(scene: Scene, item: Pump, suction: LineId, discharge: LineId, bef
         body=(-PUMP_RADIUS, PUMP_RADIUS),
         clear=-PUMP_RADIUS,
         paint=paint,
+        lead=0.0 if energy is None else energy.width + DRIVE_RADIUS + ROOM,
     )
 
 

@@ -133,10 +133,11 @@ class Row:
     def _spread(self, cells: list[Cell], limit_mm: float) -> list[_Level]:
         groups: list[list[Cell]] = [[]]
         for cell in cells:
-            if groups[-1] and _width(groups[-1]) + cell.left + cell.right > limit_mm:
-                groups.append([self._led_in(cell)])
+            here = _reaching(cell, _width(groups[-1]) + (_INDENT if len(groups) > 1 else 0.0))
+            if groups[-1] and _width(groups[-1]) + here.left + here.right > limit_mm:
+                groups.append([_reaching(self._led_in(cell), _INDENT)])
             else:
-                groups[-1].append(cell)
+                groups[-1].append(here)
         levels: list[_Level] = []
         for group in groups:
             offset = 0.0
@@ -152,6 +153,11 @@ class Row:
             return cell
         clear = cell.clear if cell.body is not None else -_OFF_DOT
         return replace(cell, left=max(cell.left, label_width(words) + _APART + _OFF_DOT - _INDENT - clear))
+
+
+def _reaching(cell: Cell, before: float) -> Cell:
+    """The cell, with as much room at its left as it reaches back beyond what stands before it."""
+    return replace(cell, left=max(cell.left, cell.lead - before)) if cell.lead > before + cell.left else cell
 
 
 def _ends(cells: list[Cell]) -> list[float]:

@@ -6,7 +6,7 @@ import pytest
 from tests.properties.planning import EXAMPLES
 from tests.unit.plan.changing import data_of
 
-from provenzero.catalogue.applies import applies_to
+from provenzero.catalogue.applies import Misfit, applies_to, misfit
 from provenzero.catalogue.job import Condition, Equipment, Job, Leave
 from provenzero.catalogue.load import catalogue
 from provenzero.unit.load import load, load_data
@@ -134,3 +134,45 @@ def test_a_regulator_that_serves_more_than_annulars_is_a_manifold_regulator() ->
     )
     assert applies_to(annular, unit_of("land-rig")) == ("RG-2",)
     assert applies_to(annular, unit) == ()
+
+
+def misfit_of(name: str, on: str) -> Misfit:
+    job = catalogue().job(name)
+    assert job is not None
+    return misfit(job, unit_of("land-rig"), on)
+
+
+@pytest.mark.parametrize(
+    ("job", "on", "words"),
+    [
+        ("replace-hoses", "P-1", "P-1 is a pump; replace-hoses is done on a function"),
+        ("replace-hoses", "RP-1", "RP-1 is a remote panel; replace-hoses is done on a function"),
+        ("replace-hoses", "HCU-7", "HCU-7 is the whole unit; replace-hoses is done on a function"),
+        ("overhaul-air-pump", "P-1", "P-1 is a pump (drive: electric); overhaul-air-pump asks for drive: air"),
+    ],
+)
+def test_a_thing_that_is_there_is_named_for_what_it_is(job: str, on: str, words: str) -> None:
+    assert misfit_of(job, on) == Misfit(words=words, known=True, meant=None)
+
+
+@pytest.mark.parametrize(
+    ("job", "on", "meant"),
+    [
+        ("replace-hoses", "HV-2", "upper-pipe-rams"),
+        ("replace-four-way-valve", "upper-pipe-rams", "HV-2"),
+        ("replace-bottle-bladder", "BK-2", "BK-2/1"),
+        ("work-on-preventer-end", "HV-5", None),  # its function is a gate valve, which the job does not take
+    ],
+)
+def test_a_piece_leads_to_the_one_of_the_right_kind_that_goes_with_it(job: str, on: str, meant: str | None) -> None:
+    assert misfit_of(job, on).known
+    assert misfit_of(job, on).meant == meant
+
+
+def test_a_name_that_nothing_has_is_not_known() -> None:
+    found = misfit_of("replace-hoses", "upper-rams")
+    assert found == Misfit(words="there is no function upper-rams on HCU-7", known=False, meant=None)
+
+
+def test_a_job_on_the_whole_unit_leads_to_the_word_unit() -> None:
+    assert misfit_of("lock-out-for-transport", "HCU-7").meant == "unit"

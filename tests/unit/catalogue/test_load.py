@@ -1,15 +1,20 @@
 """The shipped jobs fit their schema; a site's own jobs stand beside them or replace them, with all faults told."""
 
+from dataclasses import replace
 from pathlib import Path
 from typing import Any
 
 import pytest
+from tests.properties.planning import EXAMPLES
 
-from provenzero.catalogue.job import Condition, Equipment, Job, Leave, TestKind
+from provenzero.catalogue.applies import applies_to
+from provenzero.catalogue.job import ATTRIBUTES, PORTS, Condition, Equipment, Job, Leave, TestKind
 from provenzero.catalogue.load import catalogue, job_of, read_job
+from provenzero.network.compile import compile_network
 from provenzero.reading.lines import Document, load_text
 from provenzero.reading.schema import check
 from provenzero.resources import checklists
+from provenzero.unit.load import load
 
 SHIPPED = {
     file.name: file.read_text(encoding="utf-8")
@@ -151,3 +156,54 @@ def test_one_job_in_two_files_of_the_site_is_told(own: Path) -> None:
 def test_a_folder_that_is_not_there_is_told(tmp_path: Path) -> None:
     [finding] = catalogue(tmp_path / "none").findings
     assert finding.found == "no such folder"
+
+
+def test_a_folder_whose_name_no_folder_can_have_is_told(tmp_path: Path) -> None:
+    [finding] = catalogue(tmp_path / ("x" * 300)).findings
+    assert finding.found == "no such folder"
+
+
+MISMATCHES = [
+    ("opens: [open_line, close_line?]", "opens: [open_line, suction]", "opens[1]", "suction, which no function has"),
+    ("opens: [open_line, close_line?]", "opens: [open_line, open_line?]", "opens[1]", "the port open_line a second"),
+    ("only: {kind: [annular]}", "only: {drive: [air]}", "only.drive", "drive, which no function has"),
+]
+
+
+@pytest.mark.parametrize(("right", "wrong", "path", "found"), MISMATCHES, ids=[path for _, _, path, _ in MISMATCHES])
+def test_what_no_piece_of_the_kind_has_is_told_with_its_line(
+    right: str, wrong: str, path: str, found: str, own: Path
+) -> None:
+    (own / "hoses.yaml").write_text(OWN.replace(right, wrong), encoding="utf-8")
+    jobs = catalogue(own)
+    [finding] = jobs.findings
+    line = OWN.splitlines().index(right) + 1
+    assert (finding.place.line, finding.place.path) == (line, path)
+    assert finding.found.startswith(found)
+    assert jobs.job("replace-hoses") == shipped("replace-hoses")
+
+
+def test_a_piston_can_be_left_only_where_there_is_one(own: Path) -> None:
+    text = OWN.replace("equipment: function", "equipment: pump").replace("only: {kind: [annular]}\n", "")
+    text = text.replace("opens: [open_line, close_line?]", "opens: [suction]")
+    (own / "hoses.yaml").write_text(text, encoding="utf-8")
+    [finding] = catalogue(own).findings
+    assert finding.place.path == "leave"
+    (own / "hoses.yaml").write_text(text.replace("leave: open", "leave: as_found"), encoding="utf-8")
+    assert catalogue(own).findings == ()
+
+
+@pytest.mark.parametrize("equipment", list(Equipment))
+def test_the_ports_of_a_kind_are_those_that_the_circuits_of_the_examples_have(equipment: Equipment) -> None:
+    any_of_kind = replace(shipped("replace-hoses"), equipment=equipment, conditions=())
+    found = set()
+    for file in EXAMPLES.glob("*.yaml"):
+        unit = load(file).unit
+        assert unit is not None
+        on = applies_to(any_of_kind, unit)
+        found |= {port.name for port in compile_network(unit).ports if port.equipment in on}
+    assert found == set(PORTS[equipment])
+
+
+def test_each_kind_of_equipment_has_ports_and_says_what_can_be_asked_of_it() -> None:
+    assert set(PORTS) == set(ATTRIBUTES) == set(Equipment)
